@@ -1,0 +1,52 @@
+import type { Comparison, Report } from "../../engine/checks/report";
+import { Bound } from "./Bound";
+import { listed, numbered } from "./words";
+
+export type VersionState = "draft" | "checking" | "accepted" | "refused" | "held" | "retired";
+
+/** The state of a version in words, for a table. */
+export const stateWords: Record<VersionState, string> = {
+  draft: "draft",
+  checking: "being checked",
+  accepted: "accepted",
+  refused: "not accepted",
+  held: "held, undecided",
+  retired: "retired",
+};
+
+/** The exponent of a bound 2^-e, 0 where it has another shape. */
+const exponent = (bound: string): number => Number(/^2\^-(\d+)$/.exec(bound)?.[1] ?? 0);
+
+/** The weakest bound among comparisons that agree: what may be claimed of all of them. */
+export const weakestBound = (comparisons: readonly Comparison[]): string | null =>
+  comparisons
+    .filter((comparison) => comparison.agrees)
+    .map((comparison) => comparison.bound)
+    .sort((a, b) => exponent(a) - exponent(b))[0] ?? null;
+
+/** The state of a version in a sentence, with what it rests on and how far that goes. */
+export function StateSentence({ state, report }: { state: VersionState; report: Report | null }) {
+  if (state === "draft") return <>This is a draft; it has not been checked.</>;
+  if (state === "checking") return <>Its check is under way; until it ends nothing is known of this form.</>;
+  if (report === null) return <>There is no report of its check.</>;
+  if (state === "accepted" || state === "retired") {
+    const agreeing = report.comparisons.filter((comparison) => comparison.agrees);
+    const bound = weakestBound(agreeing);
+    const names = [...new Set(agreeing.map((comparison) => comparison.with))];
+    const shown = names.length > 4 ? [...names.slice(0, 3), `${numbered(names.length - 3, "other")}`] : names;
+    return (
+      <>
+        {state === "retired" ? "Retired. It was accepted" : "Accepted"}: it agrees with {listed(shown)}
+        {report.range !== undefined && report.range.length > 1 && <> for n = {report.range.join(", ")}</>}
+        {bound !== null && (
+          <>
+            , by a probabilistic identity check with bound <Bound bound={bound} />, not a symbolic proof
+          </>
+        )}
+        .
+      </>
+    );
+  }
+  if (state === "held") return <>Held: {report.summary}</>;
+  return <>Not accepted: {report.summary}</>;
+}
