@@ -50,7 +50,7 @@ export function series<T>(base: Field<T>, terms: number): SeriesField<T> {
     if (to === Number.POSITIVE_INFINITY) return zero;
     const sum: T[] = [];
     for (let order = from; order < to; order++) sum.push(operation(at(a, order), at(b, order)));
-    return normalise(Math.min(from, to), sum);
+    return normalise(from, sum);
   };
   const multiply = (a: Series<T>, b: Series<T>): Series<T> => {
     const valuation = a.valuation + b.valuation;
