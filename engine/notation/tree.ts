@@ -96,9 +96,19 @@ export type Expression =
   | { readonly kind: "cyc"; readonly body: Expression; readonly span: Span }
   | { readonly kind: "sym"; readonly body: Expression; readonly span: Span }
   /** A scalar defined by `let`. */
-  | { readonly kind: "call"; readonly name: string; readonly arguments: readonly IndexExpression[]; readonly span: Span }
+  | {
+      readonly kind: "call";
+      readonly name: string;
+      readonly arguments: readonly IndexExpression[];
+      readonly span: Span;
+    }
   /** An unknown rational number of an ansatz. */
-  | { readonly kind: "unknown"; readonly name: string; readonly arguments: readonly IndexExpression[]; readonly span: Span }
+  | {
+      readonly kind: "unknown";
+      readonly name: string;
+      readonly arguments: readonly IndexExpression[];
+      readonly span: Span;
+    }
   /** <a b c d>: items with four slots. */
   | { readonly kind: "four"; readonly items: readonly Item[]; readonly span: Span }
   /** [a b c d e], the R-invariant: items with five slots. */
