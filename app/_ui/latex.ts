@@ -27,14 +27,12 @@ export function renderLatex(latex: string): string | null {
 /** LaTeX of a bracket as the report prints it: `<1 2 (3 4) cap (5 6 7)>`, `<AB 1 2>`, `x2(1 AB)`. */
 export function bracketLatex(bracket: string): string {
   return bracket
-    .replaceAll("x2", "x^2")
+    .replaceAll(/\bbar\(([^()]*)\)/g, "\\overline{$1}")
+    .replaceAll("x2(", "x^2(")
+    .replaceAll(/ *\bcap\b */g, "\\cap{}")
+    .replaceAll("*", "{\\ast}")
+    .replaceAll(" ", "\\,")
     .replaceAll("<", "\\langle ")
     .replaceAll(">", "\\rangle ")
-    .replaceAll("|", "\\vert ")
-    .replaceAll("bar", "\\overline{\\phantom{i}}")
-    .replaceAll(/\\overline\{\\phantom\{i\}\}\(([^()]*)\)/g, "\\overline{$1}")
-    .replaceAll(/\bcap\b/g, "\\cap")
-    .replaceAll("*", "{\\ast}")
-    .replaceAll(/(?<=[0-9A-Za-z)}]) (?=[0-9A-Z({\\](?!cap|rangle|vert))/g, "\\,")
-    .trim();
+    .replaceAll("|", "\\vert ");
 }

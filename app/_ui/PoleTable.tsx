@@ -1,0 +1,51 @@
+import type { Pole } from "../../engine/checks/report";
+import { Bracket } from "./Formula";
+import { TableBox } from "./TableBox";
+import { numbered } from "./words";
+
+/** The order of a pole in words: "none", "simple", "double", "a zero". */
+function order(value: number | undefined): string {
+  if (value === undefined) return "not determined";
+  if (value < 0) return "a zero";
+  return ["none", "simple", "double", "triple"][value] ?? `of order ${value}`;
+}
+
+/** Which terms have the pole: their numbers where they are few. */
+function termsOf(pole: Pole): string {
+  if (pole.terms.length > 6) return numbered(pole.terms.length, "term");
+  return pole.terms.map((index) => index + 1).join(", ");
+}
+
+/** Poles of a form: physical ones first, each with where it stands and what is left of it in the sum. */
+export function PoleTable({ poles, label }: { poles: readonly Pole[]; label: string }) {
+  const ordered = (["physical", "spurious"] as const).flatMap((kind) => poles.filter((pole) => pole.kind === kind));
+  return (
+    <TableBox label={label}>
+      <thead>
+        <tr>
+          <th scope="col">Pole</th>
+          <th scope="col">Kind</th>
+          <th scope="col">In terms</th>
+          <th scope="col">Order there</th>
+          <th scope="col">Order in the sum</th>
+        </tr>
+      </thead>
+      <tbody>
+        {ordered.map((pole) => (
+          <tr key={pole.bracket}>
+            <th scope="row">
+              <Bracket text={pole.bracket} />
+            </th>
+            <td>
+              {pole.kind}
+              {pole.reference && ", of the reference"}
+            </td>
+            <td>{termsOf(pole)}</td>
+            <td>{order(pole.orderInTerms)}</td>
+            <td>{order(pole.order)}</td>
+          </tr>
+        ))}
+      </tbody>
+    </TableBox>
+  );
+}
