@@ -33,15 +33,7 @@ const FOLD = 24;
  * them among all. The formula breaks between terms; a term wider than the page scrolls in the formula's own box; after a dozen
  * terms the rest is folded.
  */
-export function Formula({
-  lines,
-  label,
-  first = 0,
-}: {
-  lines: readonly string[];
-  label: string;
-  first?: number;
-}) {
+export function Formula({ lines, label, first = 0 }: { lines: readonly string[]; label: string; first?: number }) {
   const shown = lines.length <= SHOWN + 4 ? lines : lines.slice(0, SHOWN);
   const folds: (readonly string[])[] = [];
   for (let at = shown.length; at < lines.length; at += FOLD) folds.push(lines.slice(at, at + FOLD));

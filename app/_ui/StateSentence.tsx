@@ -1,8 +1,7 @@
 import type { Comparison, Report } from "../../engine/checks/report";
+import type { VersionState } from "../_contract";
 import { Bound } from "./Bound";
 import { listed, numbered } from "./words";
-
-export type VersionState = "draft" | "checking" | "accepted" | "refused" | "held" | "retired";
 
 /** The state of a version in words, for a table. */
 export const stateWords: Record<VersionState, string> = {
@@ -11,7 +10,6 @@ export const stateWords: Record<VersionState, string> = {
   accepted: "accepted",
   refused: "not accepted",
   held: "held, undecided",
-  retired: "retired",
 };
 
 /** The exponent of a bound 2^-e, 0 where it has another shape. */
@@ -29,14 +27,14 @@ export function StateSentence({ state, report }: { state: VersionState; report: 
   if (state === "draft") return <>This is a draft; it has not been checked.</>;
   if (state === "checking") return <>Its check is under way; until it ends nothing is known of this form.</>;
   if (report === null) return <>There is no report of its check.</>;
-  if (state === "accepted" || state === "retired") {
+  if (state === "accepted") {
     const agreeing = report.comparisons.filter((comparison) => comparison.agrees);
     const bound = weakestBound(agreeing);
     const names = [...new Set(agreeing.map((comparison) => comparison.with))];
     const shown = names.length > 4 ? [...names.slice(0, 3), `${numbered(names.length - 3, "other")}`] : names;
     return (
       <>
-        {state === "retired" ? "Retired. It was accepted" : "Accepted"}: it agrees with {listed(shown)}
+        Accepted: it agrees with {listed(shown)}
         {report.range !== undefined && report.range.length > 1 && <> for n = {report.range.join(", ")}</>}
         {bound !== null && (
           <>

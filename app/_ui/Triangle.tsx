@@ -1,23 +1,14 @@
 import type { CSSProperties } from "react";
+import type { Triangle as TriangleView } from "../_contract";
 import { Latex } from "./Formula";
 import styles from "./Triangle.module.css";
 import { amplitudeLatex, amplitudeName, numbered } from "./words";
 
-export interface TriangleEntry {
-  readonly k: number;
-  readonly key: string;
-  readonly accepted: number;
-  readonly held: number;
-  readonly checking: number;
-}
-
-export interface TriangleRow {
-  readonly n: number;
-  readonly entries: readonly TriangleEntry[];
-}
+type TriangleRow = TriangleView["rows"][number];
+type TriangleEntry = TriangleRow["entries"][number];
 
 /** What is known of an amplitude, in words. */
-function known({ accepted, held, checking }: Omit<TriangleEntry, "k" | "key">): string {
+export function known({ accepted, held, checking }: Pick<TriangleEntry, "accepted" | "held" | "checking">): string {
   const parts = [
     ...(accepted > 0 ? [numbered(accepted, "form")] : []),
     ...(held > 0 ? [`${held} held`] : []),

@@ -76,13 +76,18 @@ function markedLine(number: number, start: number, text: string, faults: readonl
     .map((diagnostic) => {
       const [from, to] = diagnostic.span ?? [start, start];
       const column = Math.min(from - start, text.length);
-      return { diagnostic, from: column, to: Math.min(Math.max(to - start, column + 1), Math.max(text.length, column + 1)) };
+      return {
+        diagnostic,
+        from: column,
+        to: Math.min(Math.max(to - start, column + 1), Math.max(text.length, column + 1)),
+      };
     })
     .sort((a, b) => a.from - b.from || a.to - b.to);
   const first = placed[0]?.from ?? 0;
   const last = placed.reduce((most, { to }) => Math.max(most, to), 0);
   const cutFrom = text.length > 4 * CONTEXT && first > CONTEXT ? first - CONTEXT : 0;
-  const cutTo = text.length > 4 * CONTEXT ? Math.min(text.length, Math.min(last, first + 10 * CONTEXT) + CONTEXT) : text.length;
+  const cutTo =
+    text.length > 4 * CONTEXT ? Math.min(text.length, Math.min(last, first + 10 * CONTEXT) + CONTEXT) : text.length;
   const inFault = (at: number) => placed.some(({ from, to }) => from <= at && at < to);
   const pieces: Piece[] = [];
   let pointers = "";
