@@ -1,0 +1,30 @@
+/** Sources of truth: amplitudes computed by published methods, independent of the notation, the tape and the evaluator. */
+import { closedComponents } from "./closedComponents";
+import { recursionComponents, vertexComponents } from "./components";
+import { gluonRecursion } from "./gluonRecursion";
+import { chiralPentagons, kermitExpansion, kermitExpansionReference } from "./oneLoopMhv";
+import { recursion } from "./recursion";
+import type { Question, Source } from "./source";
+import { doublePentagons } from "./twoLoopMhv";
+import { vertexExpansion } from "./vertex";
+import { zero } from "./zero";
+
+export type { Question, SizeBound, Source } from "./source";
+
+/** Every source, one file each. */
+export const sources: readonly Source[] = [
+  recursion,
+  vertexExpansion,
+  recursionComponents,
+  vertexComponents,
+  gluonRecursion,
+  closedComponents,
+  kermitExpansion,
+  kermitExpansionReference,
+  chiralPentagons,
+  doublePentagons,
+  zero,
+];
+
+/** The sources that cover the question, in the order of `sources`; empty where the truth is not known. */
+export const answering = (question: Question): Source[] => sources.filter((source) => source.covers(question));
