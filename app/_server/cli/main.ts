@@ -17,3 +17,5 @@ process.exitCode = await main(process.argv.slice(2), {
   stdout: process.stdout,
   stderr: process.stderr,
 });
+
+export {};

@@ -130,7 +130,7 @@ CREATE TABLE "Comparison" (
     "agrees" BOOLEAN NOT NULL,
     "points" INTEGER NOT NULL,
     "primes" INTEGER NOT NULL,
-    "bound" TEXT NOT NULL,
+    "bound" TEXT,
     "n" INTEGER,
 
     CONSTRAINT "Comparison_pkey" PRIMARY KEY ("checkId","no")
@@ -281,6 +281,7 @@ ALTER TABLE "Fingerprint" ADD CONSTRAINT "Fingerprint_versionId_fkey" FOREIGN KE
 
 -- AddForeignKey
 ALTER TABLE "SearchText" ADD CONSTRAINT "SearchText_versionId_fkey" FOREIGN KEY ("versionId") REFERENCES "Version"("id") ON DELETE RESTRICT ON UPDATE CASCADE;
+
 
 -- Until there are accounts: the one user and the one group.
 INSERT INTO "User" ("id", "name") VALUES ('local', 'Local user');

@@ -120,7 +120,7 @@ CREATE TABLE "Comparison" (
     "agrees" BOOLEAN NOT NULL,
     "points" INTEGER NOT NULL,
     "primes" INTEGER NOT NULL,
-    "bound" TEXT NOT NULL,
+    "bound" TEXT,
     "n" INTEGER,
 
     PRIMARY KEY ("checkId", "no"),
@@ -238,6 +238,7 @@ CREATE INDEX "SearchText_scope_idx" ON "SearchText"("scope");
 
 -- CreateIndex
 CREATE INDEX "Idempotency_createdAt_idx" ON "Idempotency"("createdAt");
+
 
 -- Until there are accounts: the one user and the one group.
 INSERT INTO "User" ("id", "name") VALUES ('local', 'Local user');

@@ -1,0 +1,4 @@
+/** Forms: submitted, read, listed. */
+export { listForms } from "./list";
+export { getCertificate, getForm } from "./read";
+export { submitForm } from "./submit";

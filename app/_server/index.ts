@@ -1,0 +1,10 @@
+/** The domain: every call takes a principal first, decides itself what that one may do, and answers plain data. */
+export { getAmplitude, getTriangle, listAmplitudes } from "./amplitudes";
+export { cancelCheck, getCheck, startCheck, watchCheck } from "./checks";
+export { bibtexOf, citationFormats } from "./citations";
+export { environment } from "./env";
+export { getCertificate, getForm, listForms, submitForm } from "./forms";
+export { health } from "./health";
+export { seedProgress } from "./library";
+export type { Outcome } from "./outcome";
+export { localUser, type Principal } from "./principal";
