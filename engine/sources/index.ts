@@ -1,8 +1,12 @@
 /** Sources of truth: amplitudes computed by published methods, independent of the notation, the tape and the evaluator. */
 import { closedComponents } from "./closedComponents";
 import { recursionComponents, vertexComponents } from "./components";
+import { dualConformalIntegrals } from "./dualConformal";
+import { evenParts } from "./even";
 import { gluonRecursion } from "./gluonRecursion";
+import { logarithms } from "./log";
 import { chiralPentagons, kermitExpansion, kermitExpansionReference } from "./oneLoopMhv";
+import { oneLoopRecursion } from "./oneLoopRecursion";
 import { recursion } from "./recursion";
 import type { Question, Source } from "./source";
 import { doublePentagons } from "./twoLoopMhv";
@@ -11,7 +15,7 @@ import { zero } from "./zero";
 
 export type { Question, SizeBound, Source } from "./source";
 
-/** Every source, one file each. */
+/** Every source. */
 export const sources: readonly Source[] = [
   recursion,
   vertexExpansion,
@@ -22,7 +26,11 @@ export const sources: readonly Source[] = [
   kermitExpansion,
   kermitExpansionReference,
   chiralPentagons,
+  oneLoopRecursion,
   doublePentagons,
+  dualConformalIntegrals,
+  ...evenParts,
+  ...logarithms,
   zero,
 ];
 

@@ -30,7 +30,7 @@ export function kermitPlan(n: number, pivot: "leg" | "reference"): Plan {
 const kermitSource = (name: string, pivot: "leg" | "reference"): Source => ({
   name,
   reference: "arXiv:1008.2958 The All-Loop Integrand For Scattering Amplitudes in Planar N=4 SYM",
-  lineage: "kermit expansion",
+  lineage: "on-shell recursion",
   covers: asksOneLoopMhv,
   cost: (question) => planCost(kermitPlan(question.n, pivot), superGrading(0)),
   size: (question) => sizeOf(planBound(kermitPlan(question.n, pivot), superGrading(0))),
@@ -42,7 +42,7 @@ const kermitSource = (name: string, pivot: "leg" | "reference"): Source => ({
   },
 });
 
-/** The one-loop MHV integrand as kermits seen from leg 1: the terms of the loop recursion. */
+/** The one-loop MHV integrand as kermits seen from leg 1: the terms of the loop recursion, whence the lineage. */
 export const kermitExpansion = kermitSource("kermit expansion from leg 1", "leg");
 
 /** The same sum from the reference twistor, on which it does not depend. */
