@@ -1,0 +1,91 @@
+/** A form at one n, ready to be evaluated, and what it reads. */
+import type { PointUse } from "../kinematics";
+import type { Formula } from "../notation/tree";
+
+/** A formula with the size of its amplitude. `negativeLegs` (ascending) make it a component, null is the superamplitude. */
+export interface FormAtN {
+  readonly n: number;
+  readonly k: number;
+  readonly loops: number;
+  readonly negativeLegs: readonly number[] | null;
+  /** -1 in the convention s(a b) = <ab>[ba]: turns every square bracket, leaves s( ) and x2( ) alone. */
+  readonly squareSign: 1 | -1;
+  readonly formula: Formula;
+}
+
+/** What is needed of an entry that was read. */
+export interface FormSource {
+  readonly amplitude: { readonly k: number; readonly loops: number };
+  readonly component: readonly number[] | null;
+  readonly squareSign: 1 | -1;
+  readonly formula: Formula;
+}
+
+/** The form that an entry states for n legs; n is one of the entry's range. */
+export const formAt = (form: FormSource, n: number): FormAtN => ({
+  n,
+  k: form.amplitude.k,
+  loops: form.amplitude.loops,
+  negativeLegs: form.component,
+  squareSign: form.squareSign,
+  formula: form.formula,
+});
+
+/** What occurs in a formula: kinds of nodes, with loop lines in `x2( )` and elsewhere told apart. Definitions count where they are used. */
+interface Inventory {
+  readonly kinds: ReadonlySet<string>;
+  readonly loopsInDistances: boolean;
+  readonly loopsElsewhere: boolean;
+}
+
+function inventory(formula: Formula): Inventory {
+  const kinds = new Set<string>();
+  const names = new Set<string>();
+  const waiting: { node: unknown; inDistance: boolean }[] = [{ node: formula.expression, inDistance: false }];
+  let [loopsInDistances, loopsElsewhere] = [false, false];
+  for (let work = waiting.pop(); work !== undefined; work = waiting.pop()) {
+    const { node, inDistance } = work;
+    if (typeof node !== "object" || node === null) continue;
+    const { kind, name } = node as { kind?: unknown; name?: unknown };
+    if (typeof kind === "string") {
+      kinds.add(kind);
+      if (kind === "loopLine" || kind === "loopPoint") {
+        if (inDistance) loopsInDistances = true;
+        else loopsElsewhere = true;
+      }
+      if ((kind === "call" || kind === "named") && typeof name === "string" && !names.has(name)) {
+        names.add(name);
+        const definition = formula.definitions.find((candidate) => candidate.name === name);
+        waiting.push({ node: definition?.value, inDistance: false });
+      }
+    }
+    const inner = inDistance || kind === "distance";
+    for (const child of Object.values(node)) waiting.push({ node: child, inDistance: inner });
+  }
+  return { kinds, loopsInDistances, loopsElsewhere };
+}
+
+/** Whether a form's loop lines occur only in `x2( )`: it is then one in dual points, and <AB>^-4 for each line is supplied. */
+export function inDualPoints(formula: Formula): boolean {
+  const { loopsInDistances, loopsElsewhere } = inventory(formula);
+  return loopsInDistances && !loopsElsewhere;
+}
+
+const EXTERNAL_KINDS = ["label", "bar", "single", "range"];
+
+/** Which parts of a point a form reads. */
+export function pointUse(form: FormAtN): PointUse {
+  const { kinds, loopsInDistances, loopsElsewhere } = inventory(form.formula);
+  const grassmann = form.k > 0 && (kinds.has("five") || kinds.has("delta"));
+  return {
+    twistors: EXTERNAL_KINDS.some((kind) => kinds.has(kind)),
+    chi: grassmann,
+    lines: loopsInDistances || loopsElsewhere,
+    referenceTwistor: kinds.has("referenceTwistor"),
+    referenceChi: grassmann && kinds.has("referenceTwistor"),
+    referenceLine: kinds.has("referenceLine"),
+  };
+}
+
+/** The kinds of nodes that occur in a formula, definitions counted where they are used. */
+export const kindsOf = (formula: Formula): ReadonlySet<string> => inventory(formula).kinds;

@@ -1,0 +1,256 @@
+/** How large the polynomials are that each construct of the notation stands for, mirroring the evaluator construct by construct. */
+import type { Algebra, DualSlot, Piece, PointPiece, SpinorSlot, StringSlots } from "./algebra";
+import { type Bound, Factors, type Quotient, sumOfBits } from "./factors";
+
+/** Bounds on each component of a point and of its Grassmann vectors (null where it has none). */
+export interface PointSize extends Bound {
+  readonly key: string;
+  readonly chi: Bound | null;
+}
+
+/** Bounds on each Plücker coordinate. */
+export interface LineSize extends Bound {
+  readonly key: string;
+}
+
+type Pieces = readonly Piece<PointSize, LineSize>[];
+
+const LOG2_3 = Math.log2(3);
+const LOG2_6 = Math.log2(6);
+
+const product = (...bounds: readonly Bound[]): Bound => ({
+  degree: bounds.reduce((total, { degree }) => total + degree, 0),
+  bits: bounds.reduce((total, { bits }) => total + bits, 0),
+});
+const terms = (count: number, bound: Bound): Bound => ({ degree: bound.degree, bits: bound.bits + Math.log2(count) });
+const total = (bounds: readonly Bound[]): Bound => ({
+  degree: bounds.reduce((most, { degree }) => Math.max(most, degree), 0),
+  bits: sumOfBits(bounds.map(({ bits }) => bits)),
+});
+
+const COMPONENT: Bound = { degree: 1, bits: 0 };
+const lineOfPoints = (a: Bound, b: Bound): Bound => terms(2, product(a, b));
+/** <L M>: six products of Plücker coordinates. */
+const lineBracket = (l: Bound, m: Bound): Bound => terms(6, product(l, m));
+
+/** Interprets a formula as bounds on its size. The keys of equal polynomials are equal, so that common denominators stay small. */
+export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
+  readonly factors = new Factors();
+
+  constructor(private readonly n: number) {}
+
+  integer(x: bigint): Quotient {
+    const size = x < 0n ? -x : x;
+    if (size <= 1n) return this.factors.one();
+    const hex = size.toString(16);
+    const bits = 4 * (hex.length - 1) + Math.log2(Number.parseInt(hex[0]!, 16) + 1);
+    return this.factors.quotient([this.factors.factor(`#${size}`, { degree: 0, bits })]);
+  }
+
+  add(values: readonly Quotient[]): Quotient {
+    return this.factors.add(values);
+  }
+
+  negate(value: Quotient): Quotient {
+    return value;
+  }
+
+  multiply(values: readonly Quotient[]): Quotient {
+    return values.reduce((a, b) => this.factors.multiply(a, b), this.factors.one());
+  }
+
+  divide(numerator: Quotient, denominator: Quotient): Quotient {
+    return this.factors.multiply(numerator, this.factors.inverse(denominator));
+  }
+
+  power(base: Quotient, exponent: number): Quotient {
+    return this.factors.power(base, exponent);
+  }
+
+  externalPoint(label: number): PointSize {
+    return { key: `${label}`, ...COMPONENT, chi: COMPONENT };
+  }
+
+  loopPoint(loop: number, which: 0 | 1): PointSize {
+    return { key: `L${loop}.${which}`, ...COMPONENT, chi: null };
+  }
+
+  referenceTwistor(): PointSize {
+    return { key: "*", ...COMPONENT, chi: COMPONENT };
+  }
+
+  referencePoint(which: 0 | 1): PointSize {
+    return { key: `X${which}`, ...COMPONENT, chi: null };
+  }
+
+  meetOfLineAndPlane(line: Pieces, plane: Pieces): PointSize {
+    const [l, p] = [this.line(line), this.plane(plane)];
+    const key = `(${keys(line)})^(${keys(plane)})`;
+    const z = { degree: l.degree + p.degree, bits: l.bits + p.bits + LOG2_3 };
+    return { key, ...z, chi: this.chiOfMeet(line, plane, l, p) };
+  }
+
+  meetOfPlanes(first: Pieces, second: Pieces): LineSize {
+    return {
+      key: `(${keys(first)})^(${keys(second)})`,
+      ...terms(2, product(this.plane(first), this.plane(second))),
+    };
+  }
+
+  fourBracket(pieces: Pieces): Quotient {
+    return this.factors.quotient([this.bracketFactor(pieces)]);
+  }
+
+  fiveBracket(points: readonly PointPiece<PointSize>[]): Quotient {
+    const bottom = points.map((_, i) => this.bracketFactor(points.filter((_, j) => j !== i)));
+    return this.factors.multiply(this.delta(points), this.factors.quotient([], bottom));
+  }
+
+  /** Four rows, one a flavour, each of five products <bcde> chi_a; the determinants' own terms are counted in `sizeBound`. */
+  delta(points: readonly PointPiece<PointSize>[]): Quotient {
+    const parts = points.flatMap(({ value }, i) => {
+      if (value.chi === null) return [];
+      const [a, b, c, d] = points.filter((_, j) => j !== i).map((piece) => piece.value);
+      return [product(value.chi, lineBracket(lineOfPoints(a!, b!), lineOfPoints(c!, d!)))];
+    });
+    const row = parts.length === 0 ? { degree: 0, bits: 0 } : total(parts);
+    const key = points
+      .map(({ value }) => value.key)
+      .sort()
+      .join(" ");
+    return this.factors.quotient([this.factors.factor(`delta ${key}`, { degree: 4 * row.degree, bits: 4 * row.bits })]);
+  }
+
+  angleBracket(pieces: Pieces): Quotient {
+    return this.factors.quotient([this.factors.factor(`angle ${sortedKeys(pieces)}`, this.line(pieces))]);
+  }
+
+  squareBracket(left: SpinorSlot, right: SpinorSlot): Quotient {
+    const [a, b] = [this.tilde(left), this.tilde(right)];
+    const numerator = this.numerator(`[${slotKey(left)} ${slotKey(right)}]`, terms(2, product(a.top, b.top)));
+    return this.factors.quotient([numerator], [...a.bottom, ...b.bottom]);
+  }
+
+  spinorString({ left, first, middle, last }: StringSlots): Quotient {
+    const right = (left === "angle") === (middle.length % 2 === 0) ? "angle" : "square";
+    const end = (side: "angle" | "square", slot: SpinorSlot) =>
+      side === "square" ? this.tilde(slot) : { top: COMPONENT, bottom: [] };
+    const parts = [end(left, first), ...middle.map((legs) => this.momentum(legs)), end(right, last)];
+    const bound = terms(2 ** (middle.length + 1), product(...parts.map(({ top }) => top)));
+    const key = `${left} ${slotKey(first)}|${middle.map((legs) => sortedLegs(legs)).join("|")}|${slotKey(last)}`;
+    return this.factors.quotient(
+      [this.numerator(key, bound)],
+      parts.flatMap(({ bottom }) => bottom),
+    );
+  }
+
+  mandelstam(legs: readonly number[]): Quotient {
+    const { top, bottom } = this.momentum(legs);
+    const numerator = this.numerator(`s ${sortedLegs(legs)}`, terms(2, product(top, top)));
+    return this.factors.quotient([numerator], [...bottom, ...bottom]);
+  }
+
+  dualDistance(left: DualSlot, right: DualSlot): Quotient {
+    const pieces = [left, right].map((slot) => this.dualPoint(slot));
+    return this.factors.quotient(
+      [this.bracketFactor(pieces.flat())],
+      pieces.map((pair) => this.angleFactor(pair)),
+    );
+  }
+
+  /** <AB>^-4 for each of the loop lines. */
+  dualMeasure(loops: number): Quotient {
+    const lines = Array.from({ length: loops }, (_, loop) => this.angleFactor(this.dualPoint({ kind: "loop", loop })));
+    return this.factors.power(this.factors.quotient([], lines), 4);
+  }
+
+  private numerator(key: string, bound: Bound): number {
+    return this.factors.factor(key, bound);
+  }
+
+  private line(pieces: Pieces): Bound {
+    const [first, second] = pieces;
+    if (first?.slots === 2) return first.value;
+    return lineOfPoints(first!.value, second!.value);
+  }
+
+  /** Three products of a Plücker coordinate and a component. */
+  private plane(pieces: Pieces): Bound {
+    const line = pieces.filter((piece) => piece.slots === 2);
+    const points = pieces.filter((piece) => piece.slots === 1);
+    const inner = line[0]?.value ?? lineOfPoints(points[1]!.value, points[2]!.value);
+    const bound = product(inner, points[0]!.value);
+    return { degree: bound.degree, bits: bound.bits + LOG2_3 };
+  }
+
+  private chiOfMeet(line: Pieces, plane: Pieces, l: Bound, p: Bound): Bound | null {
+    const chis = (pieces: Pieces) => pieces.map((piece) => (piece.slots === 1 ? piece.value.chi : null));
+    const onLine = chis(line);
+    if (line.every(({ slots }) => slots === 1) && onLine.some((chi) => chi !== null)) {
+      return total(onLine.flatMap((chi, i) => (chi === null ? [] : [terms(4, product(chi, p, line[1 - i]!.value))])));
+    }
+    if (plane.some(({ slots }) => slots === 2)) return null;
+    const parts = chis(plane).flatMap((chi, i) => {
+      if (chi === null) return [];
+      const [a, b] = plane.filter((_, j) => j !== i).map(({ value }) => value);
+      return [product(chi, lineBracket(lineOfPoints(a!, b!), l))];
+    });
+    return parts.length === 0 ? null : total(parts);
+  }
+
+  private bracketFactor(pieces: Pieces): number {
+    const points = pieces.filter((piece) => piece.slots === 1).map(({ value }) => value);
+    const lines: Bound[] = pieces.filter((piece) => piece.slots === 2).map(({ value }) => value);
+    for (let i = 0; i + 1 < points.length; i += 2) lines.push(lineOfPoints(points[i]!, points[i + 1]!));
+    return this.factors.factor(`<${sortedKeys(pieces)}>`, lineBracket(lines[0]!, lines[1]!));
+  }
+
+  private dualPoint(slot: DualSlot): Piece<PointSize, LineSize>[] {
+    const points =
+      slot.kind === "leg"
+        ? [this.externalPoint(this.before(slot.label)), this.externalPoint(slot.label)]
+        : [this.loopPoint(slot.loop, 0), this.loopPoint(slot.loop, 1)];
+    return points.map((value) => ({ slots: 1, id: 0, value }));
+  }
+
+  private angleFactor(pieces: Pieces): number {
+    return this.factors.factor(`angle ${sortedKeys(pieces)}`, this.line(pieces));
+  }
+
+  private before(label: number): number {
+    return label === 1 ? this.n : label - 1;
+  }
+
+  /** <a a+1> as a factor. */
+  private neighbours(label: number): number {
+    const next = label === this.n ? 1 : label + 1;
+    return this.angleFactor(this.dualPoint({ kind: "leg", label: next }));
+  }
+
+  /** Numerator of lambdatilde: three products of an angle bracket and a component of mu. */
+  private tilde(slot: SpinorSlot): { top: Bound; bottom: number[] } {
+    if (slot.kind === "reference") return { top: COMPONENT, bottom: [] };
+    return {
+      top: { degree: 3, bits: LOG2_6 },
+      bottom: [this.neighbours(this.before(slot.label)), this.neighbours(slot.label)],
+    };
+  }
+
+  /** sum of lambda lambdatilde over the product of all the angle brackets that occur. */
+  private momentum(legs: readonly number[]): { top: Bound; bottom: number[] } {
+    const bottom = [...new Set(legs.flatMap((label) => this.tilde({ kind: "leg", label }).bottom))];
+    const all = this.factors.bound(new Map(bottom.map((factor) => [factor, 1])));
+    const own = { degree: -4, bits: -2 };
+    const summand = product(COMPONENT, this.tilde({ kind: "leg", label: 1 }).top, all, own);
+    return { top: terms(legs.length, summand), bottom };
+  }
+}
+
+const keys = (pieces: Pieces): string => pieces.map(({ value }) => value.key).join(" ");
+const sortedKeys = (pieces: Pieces): string =>
+  pieces
+    .map(({ value }) => value.key)
+    .sort()
+    .join(" ");
+const slotKey = (slot: SpinorSlot): string => (slot.kind === "leg" ? `${slot.label}` : "*");
+const sortedLegs = (legs: readonly number[]): string => [...legs].sort((a, b) => a - b).join(" ");
