@@ -35,6 +35,9 @@ const code = localFont({
   display: "swap",
 });
 
+/** Every page is made for its request: it shows what the library holds now, under a policy with a nonce of its own. */
+export const dynamic = "force-dynamic";
+
 export const metadata: Metadata = {
   title: { default: "Equiform", template: "%s · Equiform" },
   description: "A shared, checked, citable library of scattering-amplitude forms.",

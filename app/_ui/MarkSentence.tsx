@@ -1,6 +1,6 @@
-import { type Mark, type MarkCode, markCodes, type Report } from "../../engine/checks/report";
+import type { Mark, MarkCode, Report } from "../../engine/checks/report";
 import styles from "./Marks.module.css";
-import { markSentence, marks } from "./marks";
+import { markSentence, marks, readingOrder } from "./marks";
 
 /** One mark as a sentence with its evidence; nothing for a mark that states nothing. */
 export function MarkSentence({ code, mark }: { code: MarkCode; mark: Mark }) {
@@ -15,13 +15,13 @@ export function MarkSentence({ code, mark }: { code: MarkCode; mark: Mark }) {
   );
 }
 
-/** All marks of a report: what fails first, then what holds; what was not tested or does not apply is named below. */
+/** All marks of a report in the order of reading; what was not tested or does not apply is named below. */
 export function Marks({ marks: given }: { marks: Report["marks"] }) {
-  const present = markCodes.flatMap((code) => {
+  const present = readingOrder.flatMap((code) => {
     const mark = given[code];
     return mark === undefined ? [] : [{ code, mark }];
   });
-  const stated = (["fails", "holds"] as const).flatMap((state) => present.filter(({ mark }) => mark.state === state));
+  const stated = present.filter(({ mark }) => mark.state === "fails" || mark.state === "holds");
   const silent = present.filter(({ mark }) => mark.state === "untested" || mark.state === "notApplicable");
   return (
     <>

@@ -22,10 +22,11 @@ export function Lead({ children }: { children: ReactNode }) {
   return <p className={styles.lead}>{children}</p>;
 }
 
-/** A section whose head hangs in the margin where there is room. `id` names it for links. */
-export function Section({ id, head, children }: { id: string; head: string; children: ReactNode }) {
+/** A section whose head hangs in the margin where there is room, or stands above what is `wide`. `id` names it for links. */
+export function Section(props: { id: string; head: string; wide?: boolean; children: ReactNode }) {
+  const { id, head, wide = false, children } = props;
   return (
-    <section className={styles.section} aria-labelledby={id}>
+    <section className={wide ? `${styles.section} ${styles.broad}` : styles.section} aria-labelledby={id}>
       <h2 id={id}>{head}</h2>
       <div className={styles.body}>{children}</div>
     </section>

@@ -2,19 +2,23 @@ import type { CSSProperties } from "react";
 import type { Triangle as TriangleView } from "../_contract";
 import { Latex } from "./Formula";
 import styles from "./Triangle.module.css";
-import { amplitudeLatex, amplitudeName, numbered } from "./words";
+import { amplitudeLatex, amplitudeName } from "./words";
 
 type TriangleRow = TriangleView["rows"][number];
 type TriangleEntry = TriangleRow["entries"][number];
 
-/** What is known of an amplitude, in words. */
-export function known({ accepted, held, checking }: Pick<TriangleEntry, "accepted" | "held" | "checking">): string {
+/** What is known of an amplitude, in a few words each. */
+export function known({
+  accepted,
+  held,
+  checking,
+}: Pick<TriangleEntry, "accepted" | "held" | "checking">): readonly string[] {
   const parts = [
-    ...(accepted > 0 ? [numbered(accepted, "form")] : []),
+    ...(accepted > 0 ? [accepted === 1 ? "1 form" : `${accepted} forms`] : []),
     ...(held > 0 ? [`${held} held`] : []),
     ...(checking > 0 ? [`${checking} in check`] : []),
   ];
-  return parts.length === 0 ? "none yet" : parts.join(", ");
+  return parts.length === 0 ? ["none yet"] : parts;
 }
 
 /**
@@ -40,12 +44,16 @@ export function Triangle({ loops, rows }: { loops: number; rows: readonly Triang
                   <a
                     href={`/amplitudes/${entry.key}`}
                     className={entry.accepted > 0 ? styles.known : styles.open}
-                    aria-label={`${amplitudeName({ n: row.n, k: entry.k, loops })}: ${known(entry)}`}
+                    aria-label={`${amplitudeName({ n: row.n, k: entry.k, loops })}: ${known(entry).join(", ")}`}
                   >
                     <span aria-hidden="true">
                       <Latex latex={amplitudeLatex({ n: row.n, k: entry.k, loops })} />
                     </span>
-                    <span className={styles.words}>{known(entry)}</span>
+                    {known(entry).map((words) => (
+                      <span key={words} className={styles.words}>
+                        {words}
+                      </span>
+                    ))}
                   </a>
                 </li>
               ))}

@@ -1,4 +1,4 @@
-/** What each mark says, in sentences: one for every state that states something. The order is the order of reading. */
+/** What each mark says, in sentences: one for every state that states something. Their order is the order of reading. */
 import type { Mark, MarkCode } from "../../engine/checks/report";
 
 interface Sentences {
@@ -115,6 +115,9 @@ export const marks: Record<MarkCode, Sentences> = {
     fails: "A term takes both signs on positive data.",
   },
 };
+
+/** All marks in the order in which an article speaks of them. */
+export const readingOrder = Object.keys(marks) as readonly MarkCode[];
 
 /** The sentence a mark states, null where it states nothing (untested, not applicable). */
 export function markSentence(code: MarkCode, mark: Mark): string | null {

@@ -55,3 +55,18 @@ export function amplitudeOfKey(key: string): AmplitudeName | null {
 /** LaTeX of the amplitude's symbol. */
 export const amplitudeLatex = ({ n, k, loops }: AmplitudeName): string =>
   `\\mathcal{A}_{${n ?? "n"},${k}}${loops === 0 ? "" : `^{(${loops})}`}`;
+
+/** What a form's formula is, where it is not the amplitude itself. */
+export const targetNames = {
+  amplitude: "the amplitude",
+  even: "its parity-even part",
+  log: "the integrand of its logarithm",
+  zero: "an identity",
+} as const;
+
+/** Helicities as signs with thin spaces, or the negative legs in words; null for the superamplitude. */
+export function componentName(component: string | { readonly minus: readonly number[] } | null): string | null {
+  if (component === null) return null;
+  if (typeof component === "string") return `helicities ${[...component.replaceAll("-", "−")].join("\u2009")}`;
+  return `negative helicity on legs ${listed(component.minus.map(String))}`;
+}

@@ -67,7 +67,12 @@ export function EntryFields({ fields, change, part }: Props) {
         <details className={styles.rest} open={!plain}>
           <summary>Component, target, convention</summary>
           <div className={styles.fields}>
-            {text("component", "Component", "--+-++, or the negative legs 1, 2; empty for the superamplitude", "middle")}
+            {text(
+              "component",
+              "Component",
+              "--+-++, or the negative legs 1, 2; empty for the superamplitude",
+              "middle",
+            )}
             {choice("target", "What the formula is", [
               ["amplitude", "the amplitude itself"],
               ["even", "its parity-even part"],

@@ -34,7 +34,8 @@ export function PreviewPane({ state }: { state: PreviewState }) {
           </section>
           <p className={styles.help} aria-live="polite">
             {numbered(preview.terms, "term")} at n = {preview.at}
-            {preview.allLines > preview.lines.length && `; ${preview.allLines - preview.lines.length} more lines not shown`}
+            {preview.allLines > preview.lines.length &&
+              `; ${preview.allLines - preview.lines.length} more lines not shown`}
           </p>
         </>
       ) : (
@@ -45,7 +46,9 @@ export function PreviewPane({ state }: { state: PreviewState }) {
         </p>
       )}
       {tooSlow && (
-        <p className={styles.help}>The formula is too long to preview while typing. The server checks it all the same.</p>
+        <p className={styles.help}>
+          The formula is too long to preview while typing. The server checks it all the same.
+        </p>
       )}
     </section>
   );

@@ -1,0 +1,86 @@
+import type { Report } from "../../../../engine/checks/report";
+import type { CheckView } from "../../../_contract";
+import { ComparisonTable } from "../../../_ui/ComparisonTable";
+import { Diagnosis } from "../../../_ui/Diagnosis";
+import { Marks } from "../../../_ui/MarkSentence";
+import { Lead, Opening, Page, Section } from "../../../_ui/Page";
+import { SourceText } from "../../../_ui/SourceText";
+
+const titles: Record<Report["verdict"], string> = {
+  agrees: "It is right",
+  disagrees: "It is not right",
+  undecided: "It could not be decided",
+  unreadable: "It could not be read",
+};
+
+/** The verdict of a check with its reasons, and the way on from there. */
+export function VerdictArticle({ check, report }: { check: CheckView; report: Report }) {
+  const accepted = check.versionState === "accepted" && check.form !== null;
+  const wrong = report.verdict === "disagrees" || report.verdict === "unreadable";
+  return (
+    <Page>
+      <Opening kicker={check.title ?? check.version} title={accepted ? "Accepted" : titles[report.verdict]}>
+        <Lead>{report.summary}</Lead>
+        <p>{nextSteps(check, report)}</p>
+      </Opening>
+      {wrong && (
+        <Section id="wrong" head="What is wrong">
+          <Diagnosis report={report} source={check.notation} />
+          {check.notation !== null && <p>{editorLink(check, report)}</p>}
+        </Section>
+      )}
+      {Object.keys(report.marks).length > 0 && !wrong && (
+        <Section id="marks" head="What it shows">
+          <Marks marks={report.marks} />
+        </Section>
+      )}
+      {report.comparisons.length > 0 && (
+        <Section id="comparisons" head="Compared with">
+          <ComparisonTable comparisons={report.comparisons} label="What it was compared with" />
+        </Section>
+      )}
+      {check.notation !== null && (
+        <Section id="notation" head="As submitted">
+          <SourceText text={check.notation} label="The formula as submitted" copy="the formula" />
+        </Section>
+      )}
+    </Page>
+  );
+}
+
+/** Where the form is now and what can be done, in a sentence with links. */
+function nextSteps(check: CheckView, report: Report) {
+  if (check.form === null) return "This was a check only; nothing was added to the library.";
+  const form = <a href={`/${check.form}`}>{check.form}</a>;
+  if (check.versionState === "accepted") {
+    return (
+      <>
+        The form is kept as {form}, where it can be cited and its certificate downloaded
+        {report.amplitude !== undefined && (
+          <>
+            ; it stands among <a href={`/amplitudes/${report.amplitude.key}`}>the forms of its amplitude</a>
+          </>
+        )}
+        .
+      </>
+    );
+  }
+  if (check.versionState === "held")
+    return <>The form is kept as {form} and waits until there is something to compare it with.</>;
+  return <>It is kept as {form}, not accepted; it is no part of what is counted, found or cited.</>;
+}
+
+function editorLink(check: CheckView, report: Report) {
+  const query = new URLSearchParams({ notation: check.notation ?? "" });
+  if (report.amplitude !== undefined) {
+    query.set("n", report.amplitude.n === null ? "5.." : String(report.amplitude.n));
+    query.set("k", String(report.amplitude.k));
+    query.set("loops", String(report.amplitude.loops));
+  }
+  const address = `/submit?${query}`;
+  return address.length > 6000 ? (
+    <a href="/submit">Submit a mended form</a>
+  ) : (
+    <a href={address}>Mend it in the editor</a>
+  );
+}

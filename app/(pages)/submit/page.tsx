@@ -1,0 +1,39 @@
+import { randomUUID } from "node:crypto";
+import type { Metadata } from "next";
+import { headers } from "next/headers";
+import { exampleFields, fieldNames, readFields } from "../../_ui/editor/entryFields";
+import { SubmitForm } from "../../_ui/editor/SubmitForm";
+import { Lead, Opening, Page, Section } from "../../_ui/Page";
+import { submitFields } from "./actions";
+
+export const metadata: Metadata = { title: "Submit a form" };
+
+/** The editor. An address with fields in its query opens it with these; otherwise it opens with the example or the kept draft. */
+export default async function SubmitPage({
+  searchParams,
+}: {
+  searchParams: Promise<Record<string, string | string[] | undefined>>;
+}) {
+  const query = await searchParams;
+  const asked = fieldNames.some((name) => typeof query[name] === "string");
+  const nonce = (await headers()).get("x-nonce");
+  return (
+    <Page>
+      <Opening title="Submit a form">
+        <Lead>
+          Say which amplitude it is and type it as you would write it. It is compared with an independent calculation
+          and with every accepted form; that takes seconds.
+        </Lead>
+      </Opening>
+      <Section id="form" head="The form">
+        <SubmitForm
+          initial={asked ? readFields((name) => query[name]) : exampleFields}
+          asked={asked}
+          idempotencyKey={randomUUID()}
+          nonce={nonce}
+          action={submitFields}
+        />
+      </Section>
+    </Page>
+  );
+}
