@@ -47,8 +47,8 @@ export const comparisonSchema = z.strictObject({
   points: z.int().min(1),
   /** Number of different primes among the points. */
   primes: z.int().min(1),
-  /** Probability that two different forms agree at all these points is below this: "2^-108". */
-  bound: z.string(),
+  /** The probability that two different functions agree at all these points is below this: "2^-108". Absent where they disagree. */
+  bound: z.string().optional(),
   n: z.int().optional(),
   /** Publication of a source. */
   reference: z.string().optional(),

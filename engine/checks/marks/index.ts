@@ -1,0 +1,28 @@
+/** The marks that a check sets, one file each. `constraint` marks are those every amplitude has: a failure refuses the form. */
+import type { Bench } from "../bench";
+import type { Mark, MarkCode } from "../report";
+import { cyclic } from "./cyclic";
+import { dualConformal } from "./dualConformal";
+import { lineIndependent } from "./lineIndependent";
+import { localPoles } from "./localPoles";
+import { loopExchange } from "./loopExchange";
+import { referenceIndependent } from "./referenceIndependent";
+import { reflection } from "./reflection";
+
+export interface MarkCheck {
+  readonly code: MarkCode;
+  /** What the mark says where it holds, for people: completes "This form ...". */
+  readonly says: string;
+  readonly constraint: boolean;
+  readonly run: (bench: Bench) => Mark;
+}
+
+export const markChecks: readonly MarkCheck[] = [
+  { code: "cyclic", says: "is unchanged when the legs are rotated", constraint: true, run: cyclic },
+  { code: "reflection", says: "is unchanged when the order of the legs is reversed", constraint: true, run: reflection },
+  { code: "loopExchange", says: "is symmetric in the loop lines", constraint: true, run: loopExchange },
+  { code: "referenceIndependent", says: "does not depend on its references", constraint: true, run: referenceIndependent },
+  { code: "lineIndependent", says: "depends on the loop lines only, not on the points that span them", constraint: true, run: lineIndependent },
+  { code: "dualConformal", says: "is dual conformally invariant", constraint: true, run: dualConformal },
+  { code: "localPoles", says: "has only physical poles in its denominators", constraint: false, run: localPoles },
+];

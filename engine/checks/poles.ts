@@ -1,0 +1,285 @@
+/** The poles of a form: the brackets in its denominators, term by term, told apart as physical and spurious (ENGINE section 5). */
+import type { FormAtN } from "../evaluate/form";
+import { enumerateBindings } from "../notation/bindings";
+import { cyclicPlaces, definitionPlace, definitionsOf, expandTerms, type Place, scalarBody, symmetricPlaces } from "../notation/expand";
+import { evaluateLabel, evaluateNumber, momentumLegs } from "../notation/indices";
+import type { Definition, DualPoint, Expression, Item, MeetItem, NamedItem, Operand, SpinorEnd } from "../notation/tree";
+import {
+  adjacent,
+  factorsOfFour,
+  holdsReference,
+  isPhysicalFour,
+  itemsText,
+  meetLine,
+  meetPoint,
+  type Point,
+} from "./brackets";
+import type { Pole } from "./report";
+
+interface Divisor {
+  readonly text: string;
+  readonly physical: boolean;
+  readonly reference: boolean;
+}
+
+/** Formal order of an expression on each divisor, as written: negative in a denominator. A lower bound of the true valuation. */
+type Orders = ReadonlyMap<string, number>;
+
+/** Poles of all top-level terms, in order of first appearance; `terms` holds the indices of the terms with the bracket in a denominator. */
+export function findPoles(form: FormAtN): readonly Pole[] {
+  const finder = new PoleFinder(form);
+  const poles = new Map<string, number[]>();
+  let index = 0;
+  for (const term of expandTerms(form.formula, form)) {
+    for (const [key, order] of finder.orders(term.expression, term)) {
+      if (order >= 0) continue;
+      const terms = poles.get(key);
+      if (terms === undefined) poles.set(key, [index]);
+      else terms.push(index);
+    }
+    index += 1;
+  }
+  return [...poles].map(([key, terms]) => {
+    const divisor = finder.divisors.get(key);
+    if (divisor === undefined) throw new Error(`findPoles: no divisor ${key}`);
+    return { bracket: divisor.text, kind: divisor.physical ? "physical" : "spurious", reference: divisor.reference, terms };
+  });
+}
+
+const none: Orders = new Map();
+
+class PoleFinder {
+  readonly divisors = new Map<string, Divisor>();
+  readonly #definitions: ReadonlyMap<string, Definition>;
+  readonly #memo = new Map<string, Orders>();
+
+  constructor(private readonly form: FormAtN) {
+    this.#definitions = definitionsOf(form.formula);
+  }
+
+  orders(e: Expression, at: Place): Orders {
+    switch (e.kind) {
+      case "integer":
+      case "index":
+      case "unknown":
+        return none;
+      case "negate":
+        return this.orders(e.operand, at);
+      case "add":
+        return smallest(e.summands.map((s) => this.orders(s, at)));
+      case "multiply":
+        return e.factors.reduce<Orders>((total, f) => combined(total, this.orders(f, at), 1), none);
+      case "divide":
+        return combined(this.orders(e.numerator, at), this.#denominator(e.denominator, at), -1);
+      case "power": {
+        const power = Number(evaluateNumber(e.exponent, at.bindings));
+        const base = power < 0 ? this.#denominator(e.base, at) : this.orders(e.base, at);
+        return combined(none, base, power);
+      }
+      case "sum":
+        return smallest([...enumerateBindings(e, at.bindings)].map((bindings) => this.orders(e.body, { ...at, bindings })));
+      case "product":
+        return [...enumerateBindings(e, at.bindings)].reduce<Orders>(
+          (total, bindings) => combined(total, this.orders(e.body, { ...at, bindings }), 1),
+          none,
+        );
+      case "cyc":
+        return smallest(cyclicPlaces(at, this.form.n).map((place) => this.orders(e.body, place)));
+      case "sym":
+        return smallest(symmetricPlaces(at, this.form.loops).map((place) => this.orders(e.body, place)));
+      case "call":
+        return this.#call(e, at);
+      case "four":
+        return this.#fours([this.#points(e.items, at)], 1);
+      case "five": {
+        const points = this.#points(e.items, at);
+        return this.#fours(points.map((_, left) => points.filter((_, i) => i !== left)), -1);
+      }
+      case "delta":
+        return none;
+      case "angle":
+        return this.#angle(this.#points(e.items, at));
+      case "square":
+        return this.#square(e.left, e.right, at);
+      case "string":
+        return this.#whole(`${open[e.left]}${this.#end(e.first, at)}|${e.middle
+          .map((m) => momentumLegs(m, at.bindings, this.form.n, at.shift).sort((a, b) => a - b).join("+"))
+          .join("|")}|${this.#end(e.last, at)}${close[e.right]}`, false);
+      case "mandelstam":
+        return this.#mandelstam(momentumLegs(e.momenta, at.bindings, this.form.n, at.shift));
+      case "distance":
+        return this.#fours([[...this.#dual(e.left, at), ...this.#dual(e.right, at)]], 1);
+    }
+  }
+
+  /** A denominator that is a sum is a divisor of its own: its summands say nothing about where it vanishes. */
+  #denominator(e: Expression, at: Place): Orders {
+    if (e.kind === "negate") return this.#denominator(e.operand, at);
+    if (e.kind === "multiply") return e.factors.reduce<Orders>((total, f) => combined(total, this.#denominator(f, at), 1), none);
+    if (e.kind === "call") {
+      const definition = this.#definitions.get(e.name);
+      if (definition !== undefined) return this.#denominator(scalarBody(this.#definitions, e.name), definitionPlace(definition, e.arguments, at, this.form.n));
+    }
+    if (e.kind === "add" || e.kind === "sum" || e.kind === "cyc" || e.kind === "sym") return this.#whole(this.#sumText(e, at), false);
+    return this.orders(e, at);
+  }
+
+  /** A name for a denominator that is a sum: the brackets that its summands hold, so that equal sums have equal names. */
+  #sumText(e: Expression, at: Place): string {
+    const names = (x: Expression, place: Place): string => {
+      if (x.kind === "add") return x.summands.map((s) => names(s, place)).join(" + ");
+      const text = [...this.orders(x, place)].map(([key, order]) => (order === 1 ? key : `${key}^${order}`)).join(" ");
+      return text === "" ? "1" : text;
+    };
+    return `sum of ${names(e, at)}`;
+  }
+
+  #call(e: Extract<Expression, { kind: "call" }>, at: Place): Orders {
+    const definition = this.#definitions.get(e.name);
+    if (definition === undefined) throw new Error(`findPoles: expected ${e.name} to be defined`);
+    const place = definitionPlace(definition, e.arguments, at, this.form.n);
+    const values = definition.parameters.map((p) => place.bindings.get(p)).join(",");
+    const key = `${e.name}|${values}|${at.shift}|${at.permutation.join("")}`;
+    const known = this.#memo.get(key);
+    if (known !== undefined) return known;
+    const orders = this.orders(scalarBody(this.#definitions, e.name), place);
+    this.#memo.set(key, orders);
+    return orders;
+  }
+
+  #fours(brackets: readonly (readonly Point[])[], order: number): Orders {
+    const total = new Map<string, number>();
+    for (const points of brackets)
+      for (const factor of factorsOfFour(points)) {
+        const text = `<${itemsText(factor)}>`;
+        this.#note(text, isPhysicalFour(factor, this.form.n), holdsReference(factor));
+        total.set(text, (total.get(text) ?? 0) + order);
+      }
+    return total;
+  }
+
+  #angle(points: readonly Point[]): Orders {
+    const labels = points.flatMap((p) => (p.kind === "label" ? [p.label] : []));
+    const [a, b] = labels;
+    const physical = a !== undefined && b !== undefined && adjacent(a, b, this.form.n);
+    return this.#whole(`<${itemsText(points)}>`, physical, holdsReference(points));
+  }
+
+  #square(left: SpinorEnd, right: SpinorEnd, at: Place): Orders {
+    const ends = [this.#end(left, at), this.#end(right, at)].sort((a, b) => Number(a) - Number(b));
+    const [a, b] = ends.map(Number);
+    return this.#whole(`[${ends.join(" ")}]`, !ends.includes("*") && adjacent(a ?? 0, b ?? 0, this.form.n), ends.includes("*"));
+  }
+
+  /** s of legs S is s of the other legs too: the name is the shorter of the two, or the one that holds the lowest leg. */
+  #mandelstam(legs: readonly number[]): Orders {
+    const { n } = this.form;
+    const set = [...new Set(legs)].sort((a, b) => a - b);
+    const rest = Array.from({ length: n }, (_, i) => i + 1).filter((a) => !set.includes(a));
+    const shorter = set.length < rest.length || (set.length === rest.length && set[0] === 1) ? set : rest;
+    const jumps = shorter.filter((a, i) => !adjacent(a, shorter[(i + 1) % shorter.length] ?? 0, n)).length;
+    return this.#whole(`s(${shorter.join(" ")})`, shorter.length > 0 && jumps <= 1);
+  }
+
+  #whole(text: string, physical: boolean, reference = text.includes("*")): Orders {
+    this.#note(text, physical, reference);
+    return new Map([[text, 1]]);
+  }
+
+  #note(text: string, physical: boolean, reference: boolean): void {
+    if (!this.divisors.has(text)) this.divisors.set(text, { text, physical, reference });
+  }
+
+  #end(end: SpinorEnd, at: Place): string {
+    return end.kind === "label" ? String(evaluateLabel(end.index, at.bindings, this.form.n, at.shift)) : "*";
+  }
+
+  #dual(point: DualPoint, at: Place): readonly Point[] {
+    if (point.kind === "loopLine") return line(at, point.loop);
+    const label = evaluateLabel(point.index, at.bindings, this.form.n, at.shift);
+    return [
+      { kind: "label", label: label === 1 ? this.form.n : label - 1 },
+      { kind: "label", label },
+    ];
+  }
+
+  #points(items: readonly Item[], at: Place): readonly Point[] {
+    return items.flatMap((item) => this.#item(item, at));
+  }
+
+  #item(item: Item, at: Place): readonly Point[] {
+    switch (item.kind) {
+      case "label":
+        return [{ kind: "label", label: evaluateLabel(item.index, at.bindings, this.form.n, at.shift) }];
+      case "loopPoint": {
+        const letter = "ABCDEFGH".indexOf(item.letter);
+        const point = line(at, Math.floor(letter / 2))[letter % 2];
+        return point === undefined ? [] : [point];
+      }
+      case "loopLine":
+        return line(at, item.loop);
+      case "referenceTwistor":
+        return [{ kind: "star" }];
+      case "referenceLine":
+        return [
+          { kind: "reference", which: 0 },
+          { kind: "reference", which: 1 },
+        ];
+      case "meet":
+        return this.#meet(item, at);
+      case "named":
+        return this.#named(item, at);
+    }
+  }
+
+  #named(item: NamedItem, at: Place): readonly Point[] {
+    const definition = this.#definitions.get(item.name);
+    if (definition?.value.kind !== "geometry") throw new Error(`findPoles: expected ${item.name} to be a point, line or plane`);
+    const place = definitionPlace(definition, item.arguments, at, this.form.n);
+    const { geometry } = definition.value;
+    return geometry.kind === "meet" ? this.#meet(geometry, place) : this.#points(geometry.items, place);
+  }
+
+  #meet(meet: MeetItem, at: Place): readonly Point[] {
+    const left = this.#operand(meet.left, at);
+    const right = this.#operand(meet.right, at);
+    if (left.length === 3 && right.length === 3) return meetLine(left, right);
+    return [left.length === 2 ? meetPoint(left, right) : meetPoint(right, left)];
+  }
+
+  #operand(operand: Operand, at: Place): readonly Point[] {
+    if (operand.kind === "group") return this.#points(operand.items, at);
+    return [-1, 0, 1].map((offset) => ({
+      kind: "label",
+      label: evaluateLabel(operand.index, at.bindings, this.form.n, at.shift + offset),
+    }));
+  }
+}
+
+const open = { angle: "<", square: "[" } as const;
+const close = { angle: ">", square: "]" } as const;
+
+function line(at: Place, loop: number): readonly Point[] {
+  const moved = at.permutation[loop];
+  if (moved === undefined) throw new Error(`findPoles: no loop line ${loop}`);
+  return [
+    { kind: "letter", line: moved, which: 0 },
+    { kind: "letter", line: moved, which: 1 },
+  ];
+}
+
+function combined(a: Orders, b: Orders, factor: number): Orders {
+  if (b.size === 0) return a;
+  const total = new Map(a);
+  for (const [key, order] of b) total.set(key, (total.get(key) ?? 0) + factor * order);
+  return total;
+}
+
+/** Order of a sum: on each divisor the least of its summands, which is 0 where a summand does not hold it. */
+function smallest(all: readonly Orders[]): Orders {
+  const total = new Map<string, number>();
+  for (const key of new Set(all.flatMap((orders) => [...orders.keys()]))) {
+    total.set(key, Math.min(...all.map((orders) => orders.get(key) ?? 0)));
+  }
+  return total;
+}
