@@ -36,23 +36,25 @@ const lineBracket = (l: Bound, m: Bound): Bound => terms(6, product(l, m));
 /** Interprets a formula as bounds on its size. The keys of equal polynomials are equal, so that common denominators stay small. */
 export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
   readonly factors = new Factors();
+  private readonly shortKeys = new Map<string, string>();
 
   constructor(private readonly n: number) {}
 
   integer(x: bigint): Quotient {
-    const size = x < 0n ? -x : x;
-    if (size <= 1n) return this.factors.one();
-    const hex = size.toString(16);
+    if (x < 0n) return this.negate(this.integer(-x));
+    if (x <= 1n) return this.factors.one();
+    const hex = x.toString(16);
     const bits = 4 * (hex.length - 1) + Math.log2(Number.parseInt(hex[0]!, 16) + 1);
-    return this.factors.quotient([this.factors.factor(`#${size}`, { degree: 0, bits })]);
+    return this.factors.quotient([this.factors.factor(`#${x}`, { degree: 0, bits })]);
   }
 
   add(values: readonly Quotient[]): Quotient {
     return this.factors.add(values);
   }
 
+  /** The sign is kept as a factor of size one: a + b and a - b are different polynomials. */
   negate(value: Quotient): Quotient {
-    return value;
+    return this.factors.multiply(value, this.factors.quotient([this.factors.factor("-", { degree: 0, bits: 0 })]));
   }
 
   multiply(values: readonly Quotient[]): Quotient {
@@ -85,25 +87,28 @@ export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
 
   meetOfLineAndPlane(line: Pieces, plane: Pieces): PointSize {
     const [l, p] = [this.line(line), this.plane(plane)];
-    const key = `(${keys(line)})^(${keys(plane)})`;
+    const key = this.shortKey(`(${keys(line)})^(${keys(plane)})`);
     const z = { degree: l.degree + p.degree, bits: l.bits + p.bits + LOG2_3 };
     return { key, ...z, chi: this.chiOfMeet(line, plane, l, p) };
   }
 
   meetOfPlanes(first: Pieces, second: Pieces): LineSize {
     return {
-      key: `(${keys(first)})^(${keys(second)})`,
+      key: this.shortKey(`(${keys(first)})^(${keys(second)})`),
       ...terms(2, product(this.plane(first), this.plane(second))),
     };
   }
 
   fourBracket(pieces: Pieces): Quotient {
-    return this.factors.quotient([this.bracketFactor(pieces)]);
+    const points = pieces.filter((piece) => piece.slots === 1).map(({ value }) => value);
+    const lines: Bound[] = pieces.filter((piece) => piece.slots === 2).map(({ value }) => value);
+    for (let i = 0; i + 1 < points.length; i += 2) lines.push(lineOfPoints(points[i]!, points[i + 1]!));
+    return this.antisymmetric("four", pieces, lineBracket(lines[0]!, lines[1]!));
   }
 
   fiveBracket(points: readonly PointPiece<PointSize>[]): Quotient {
-    const bottom = points.map((_, i) => this.bracketFactor(points.filter((_, j) => j !== i)));
-    return this.factors.multiply(this.delta(points), this.factors.quotient([], bottom));
+    const denominator = points.map((_, i) => this.fourBracket(points.filter((_, j) => j !== i)));
+    return this.divide(this.delta(points), this.multiply(denominator));
   }
 
   /** Four rows, one a flavour, each of five products <bcde> chi_a; the determinants' own terms are counted in `sizeBound`. */
@@ -114,20 +119,16 @@ export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
       return [product(value.chi, lineBracket(lineOfPoints(a!, b!), lineOfPoints(c!, d!)))];
     });
     const row = parts.length === 0 ? { degree: 0, bits: 0 } : total(parts);
-    const key = points
-      .map(({ value }) => value.key)
-      .sort()
-      .join(" ");
-    return this.factors.quotient([this.factors.factor(`delta ${key}`, { degree: 4 * row.degree, bits: 4 * row.bits })]);
+    return this.antisymmetric("delta", points, { degree: 4 * row.degree, bits: 4 * row.bits });
   }
 
   angleBracket(pieces: Pieces): Quotient {
-    return this.factors.quotient([this.factors.factor(`angle ${sortedKeys(pieces)}`, this.line(pieces))]);
+    return this.antisymmetric("angle", pieces, this.line(pieces));
   }
 
   squareBracket(left: SpinorSlot, right: SpinorSlot): Quotient {
     const [a, b] = [this.tilde(left), this.tilde(right)];
-    const numerator = this.numerator(`[${slotKey(left)} ${slotKey(right)}]`, terms(2, product(a.top, b.top)));
+    const numerator = this.factors.factor(`[${slotKey(left)} ${slotKey(right)}]`, terms(2, product(a.top, b.top)));
     return this.factors.quotient([numerator], [...a.bottom, ...b.bottom]);
   }
 
@@ -139,33 +140,48 @@ export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
     const bound = terms(2 ** (middle.length + 1), product(...parts.map(({ top }) => top)));
     const key = `${left} ${slotKey(first)}|${middle.map((legs) => sortedLegs(legs)).join("|")}|${slotKey(last)}`;
     return this.factors.quotient(
-      [this.numerator(key, bound)],
+      [this.factors.factor(key, bound)],
       parts.flatMap(({ bottom }) => bottom),
     );
   }
 
   mandelstam(legs: readonly number[]): Quotient {
     const { top, bottom } = this.momentum(legs);
-    const numerator = this.numerator(`s ${sortedLegs(legs)}`, terms(2, product(top, top)));
+    const numerator = this.factors.factor(`s ${sortedLegs(legs)}`, terms(2, product(top, top)));
     return this.factors.quotient([numerator], [...bottom, ...bottom]);
   }
 
   dualDistance(left: DualSlot, right: DualSlot): Quotient {
     const pieces = [left, right].map((slot) => this.dualPoint(slot));
-    return this.factors.quotient(
-      [this.bracketFactor(pieces.flat())],
-      pieces.map((pair) => this.angleFactor(pair)),
-    );
+    return this.divide(this.fourBracket(pieces.flat()), this.multiply(pieces.map((pair) => this.angleBracket(pair))));
   }
 
   /** <AB>^-4 for each of the loop lines. */
   dualMeasure(loops: number): Quotient {
-    const lines = Array.from({ length: loops }, (_, loop) => this.angleFactor(this.dualPoint({ kind: "loop", loop })));
-    return this.factors.power(this.factors.quotient([], lines), 4);
+    const lines = Array.from({ length: loops }, (_, loop) => this.angleBracket(this.dualPoint({ kind: "loop", loop })));
+    return this.power(this.multiply(lines), -4);
   }
 
-  private numerator(key: string, bound: Bound): number {
-    return this.factors.factor(key, bound);
+  /** A factor known by its pieces in ascending order, with the sign of the order they are in (lines of two slots move freely). */
+  private antisymmetric(name: string, pieces: Pieces, bound: Bound): Quotient {
+    const points = pieces.filter(({ slots }) => slots === 1).map(({ value }) => value.key);
+    const inversions = points.reduce((sum, key, i) => sum + points.slice(i).filter((later) => later < key).length, 0);
+    const sorted = pieces
+      .map(({ value }) => value.key)
+      .sort()
+      .join(" ");
+    const value = this.factors.quotient([this.factors.factor(`${name} ${sorted}`, bound)]);
+    return inversions % 2 === 1 ? this.negate(value) : value;
+  }
+
+  /** Nested meets would have keys that grow exponentially. */
+  private shortKey(key: string): string {
+    let known = this.shortKeys.get(key);
+    if (known === undefined) {
+      known = `m${this.shortKeys.size}`;
+      this.shortKeys.set(key, known);
+    }
+    return known;
   }
 
   private line(pieces: Pieces): Bound {
@@ -198,23 +214,12 @@ export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
     return parts.length === 0 ? null : total(parts);
   }
 
-  private bracketFactor(pieces: Pieces): number {
-    const points = pieces.filter((piece) => piece.slots === 1).map(({ value }) => value);
-    const lines: Bound[] = pieces.filter((piece) => piece.slots === 2).map(({ value }) => value);
-    for (let i = 0; i + 1 < points.length; i += 2) lines.push(lineOfPoints(points[i]!, points[i + 1]!));
-    return this.factors.factor(`<${sortedKeys(pieces)}>`, lineBracket(lines[0]!, lines[1]!));
-  }
-
   private dualPoint(slot: DualSlot): Piece<PointSize, LineSize>[] {
     const points =
       slot.kind === "leg"
         ? [this.externalPoint(this.before(slot.label)), this.externalPoint(slot.label)]
         : [this.loopPoint(slot.loop, 0), this.loopPoint(slot.loop, 1)];
     return points.map((value) => ({ slots: 1, id: 0, value }));
-  }
-
-  private angleFactor(pieces: Pieces): number {
-    return this.factors.factor(`angle ${sortedKeys(pieces)}`, this.line(pieces));
   }
 
   private before(label: number): number {
@@ -224,7 +229,8 @@ export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
   /** <a a+1> as a factor. */
   private neighbours(label: number): number {
     const next = label === this.n ? 1 : label + 1;
-    return this.angleFactor(this.dualPoint({ kind: "leg", label: next }));
+    const key = [`${label}`, `${next}`].sort().join(" ");
+    return this.factors.factor(`angle ${key}`, lineOfPoints(COMPONENT, COMPONENT));
   }
 
   /** Numerator of lambdatilde: three products of an angle bracket and a component of mu. */
@@ -240,6 +246,7 @@ export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
   private momentum(legs: readonly number[]): { top: Bound; bottom: number[] } {
     const bottom = [...new Set(legs.flatMap((label) => this.tilde({ kind: "leg", label }).bottom))];
     const all = this.factors.bound(new Map(bottom.map((factor) => [factor, 1])));
+    // Each summand lacks the two angle brackets of its own denominator, degree 2 and one bit each.
     const own = { degree: -4, bits: -2 };
     const summand = product(COMPONENT, this.tilde({ kind: "leg", label: 1 }).top, all, own);
     return { top: terms(legs.length, summand), bottom };
@@ -247,10 +254,5 @@ export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
 }
 
 const keys = (pieces: Pieces): string => pieces.map(({ value }) => value.key).join(" ");
-const sortedKeys = (pieces: Pieces): string =>
-  pieces
-    .map(({ value }) => value.key)
-    .sort()
-    .join(" ");
 const slotKey = (slot: SpinorSlot): string => (slot.kind === "leg" ? `${slot.label}` : "*");
 const sortedLegs = (legs: readonly number[]): string => [...legs].sort((a, b) => a - b).join(" ");
