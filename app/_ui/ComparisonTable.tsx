@@ -34,7 +34,7 @@ export function ComparisonTable({ comparisons, label }: { comparisons: readonly 
             <td>{comparison.agrees ? "agrees" : "differs"}</td>
             <td>{comparison.points}</td>
             <td>{comparison.primes}</td>
-            <td>{comparison.agrees ? <Bound bound={comparison.bound} /> : "–"}</td>
+            <td>{comparison.bound !== undefined ? <Bound bound={comparison.bound} /> : "–"}</td>
           </tr>
         ))}
       </tbody>

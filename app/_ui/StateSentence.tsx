@@ -18,8 +18,7 @@ const exponent = (bound: string): number => Number(/^2\^-(\d+)$/.exec(bound)?.[1
 /** The weakest bound among comparisons that agree: what may be claimed of all of them. */
 export const weakestBound = (comparisons: readonly Comparison[]): string | null =>
   comparisons
-    .filter((comparison) => comparison.agrees)
-    .map((comparison) => comparison.bound)
+    .flatMap(({ agrees, bound }) => (agrees && bound !== undefined ? [bound] : []))
     .sort((a, b) => exponent(a) - exponent(b))[0] ?? null;
 
 /** The state of a version in a sentence, with what it rests on and how far that goes. */

@@ -1,21 +1,26 @@
 import { randomUUID } from "node:crypto";
 import type { Metadata } from "next";
 import { headers } from "next/headers";
-import { exampleFields, fieldNames, readFields } from "../../_ui/editor/entryFields";
+import { getForm } from "../../_server/forms";
+import { localUser } from "../../_server/principal";
+import { exampleFields, fieldNames, fieldsOf, readFields } from "../../_ui/editor/entryFields";
 import { SubmitForm } from "../../_ui/editor/SubmitForm";
 import { Lead, Opening, Page, Section } from "../../_ui/Page";
 import { submitFields } from "./actions";
 
 export const metadata: Metadata = { title: "Submit a form" };
 
-/** The editor. An address with fields in its query opens it with these; otherwise it opens with the example or the kept draft. */
+/** The editor. An address with fields or a kept form in its query opens it with these; otherwise it opens with the example or the kept draft. */
 export default async function SubmitPage({
   searchParams,
 }: {
   searchParams: Promise<Record<string, string | string[] | undefined>>;
 }) {
   const query = await searchParams;
-  const asked = fieldNames.some((name) => typeof query[name] === "string");
+  const kept = typeof query.form === "string" ? await getForm(localUser, query.form) : null;
+  const form = kept?.kind === "form" ? kept : null;
+  const asked = form !== null || fieldNames.some((name) => typeof query[name] === "string");
+  const initial = form !== null ? fieldsOf(form) : asked ? readFields((name) => query[name]) : exampleFields;
   const nonce = (await headers()).get("x-nonce");
   return (
     <Page>
@@ -26,13 +31,7 @@ export default async function SubmitPage({
         </Lead>
       </Opening>
       <Section id="form" head="The form">
-        <SubmitForm
-          initial={asked ? readFields((name) => query[name]) : exampleFields}
-          asked={asked}
-          idempotencyKey={randomUUID()}
-          nonce={nonce}
-          action={submitFields}
-        />
+        <SubmitForm initial={initial} asked={asked} idempotencyKey={randomUUID()} nonce={nonce} action={submitFields} />
       </Section>
     </Page>
   );

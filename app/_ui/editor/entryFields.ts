@@ -1,5 +1,7 @@
 /** The fields of the submit page as a person fills them in, and the entry document they make. Used by browser and server. */
+
 import type { Diagnostic } from "../../../engine/result";
+import type { FormView } from "../../_contract";
 
 export const fieldNames = [
   "n",
@@ -47,6 +49,28 @@ export function readFields(get: (name: FieldName) => unknown): Fields {
     if (typeof value === "string") fields[name] = value.replaceAll("\r\n", "\n");
   }
   return fields;
+}
+
+/** The fields that make a kept form again, to be changed and submitted. */
+export function fieldsOf(form: FormView): Fields {
+  const { n, k, loops, range } = form.amplitude;
+  const legs = range === null ? String(n) : `${range.from}..${range.to ?? ""}`;
+  const component = form.component ?? "";
+  return {
+    n: legs,
+    k: String(k),
+    loops: String(loops),
+    component: typeof component === "string" ? component : component.minus.join(", "),
+    target: form.target,
+    square: form.s,
+    notation: form.notation,
+    title: form.title ?? "",
+    method: form.method ?? "",
+    references: form.references
+      .map(({ arxiv, doi, journal, where }) => [arxiv ?? doi ?? journal ?? "", where ?? ""].join(" ").trim())
+      .join("\n"),
+    note: form.note ?? "",
+  };
 }
 
 /**

@@ -26,7 +26,7 @@ export function VerdictArticle({ check, report }: { check: CheckView; report: Re
       {wrong && (
         <Section id="wrong" head="What is wrong">
           <Diagnosis report={report} source={check.notation} />
-          {check.notation !== null && <p>{editorLink(check, report)}</p>}
+          {check.notation !== null && <p>{editorLink(check)}</p>}
         </Section>
       )}
       {Object.keys(report.marks).length > 0 && !wrong && (
@@ -70,17 +70,9 @@ function nextSteps(check: CheckView, report: Report) {
   return <>It is kept as {form}, not accepted; it is no part of what is counted, found or cited.</>;
 }
 
-function editorLink(check: CheckView, report: Report) {
-  const query = new URLSearchParams({ notation: check.notation ?? "" });
-  if (report.amplitude !== undefined) {
-    query.set("n", report.amplitude.n === null ? "5.." : String(report.amplitude.n));
-    query.set("k", String(report.amplitude.k));
-    query.set("loops", String(report.amplitude.loops));
-  }
-  const address = `/submit?${query}`;
-  return address.length > 6000 ? (
-    <a href="/submit">Submit a mended form</a>
-  ) : (
-    <a href={address}>Mend it in the editor</a>
-  );
+/** The way back to the editor: with the kept form's fields, or with the formula where nothing was kept and an address can hold it. */
+function editorLink(check: CheckView) {
+  if (check.form !== null) return <a href={`/submit?form=${check.form}`}>Mend it in the editor</a>;
+  const address = `/submit?${new URLSearchParams({ notation: check.notation ?? "" })}`;
+  return <a href={address.length > 6000 ? "/submit" : address}>Mend it in the editor</a>;
 }
