@@ -34,5 +34,6 @@ export function bracketLatex(bracket: string): string {
     .replaceAll(" ", "\\,")
     .replaceAll("<", "\\langle ")
     .replaceAll(">", "\\rangle ")
-    .replaceAll("|", "\\vert ");
+    .replaceAll("|", "\\vert ")
+    .trim();
 }
