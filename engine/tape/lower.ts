@@ -1,0 +1,352 @@
+/** From the syntax tree to a graph of ring operations: sums written out, labels reduced, brackets normalised, deltas as determinants. */
+import { enumerateBindings } from "../notation/bindings";
+import {
+  cyclicPlaces,
+  definitionPlace,
+  definitionsOf,
+  expandTerms,
+  type Place,
+  scalarBody,
+  symmetricPlaces,
+} from "../notation/expand";
+import { evaluateLabel, evaluateNumber, momentumLegs } from "../notation/indices";
+import type {
+  Definition,
+  DualPoint,
+  Expression,
+  Formula,
+  IndexExpression,
+  Item,
+  Operand,
+  SpinorEnd,
+} from "../notation/tree";
+import type { Span } from "../result";
+import { type Element, Exterior } from "./exterior";
+import { type Figure, Geometry, loopLineFigure, pointFigure, referenceLineFigure, slotsOf } from "./geometry";
+import { type Graph, negated, type Ref } from "./graph";
+import { type DualLine, type SpinorLabel, Spinors } from "./spinors";
+import { TupleTable } from "./tuples";
+
+/** A form at one n: what a tape is made from. */
+export interface FormToCompile {
+  readonly n: number;
+  readonly k: number;
+  readonly loops: number;
+  /** Legs of negative helicity of a component form, null for a superamplitude; a value is what is written in both. */
+  readonly negativeLegs: readonly number[] | null;
+  readonly squareSign: 1 | -1;
+  readonly formula: Formula;
+}
+
+/** Arguments of definitions up to this size are told apart by value, larger ones by a list. */
+const SMALL = 1 << 29;
+
+export class Lowering {
+  private readonly geometry: Geometry;
+  private readonly exterior: Exterior;
+  private readonly spinors: Spinors;
+  private readonly definitions: ReadonlyMap<string, Definition>;
+  private readonly numbers = new Map<string, number>();
+  private readonly uses = new TupleTable();
+  private readonly scalars: (Element | undefined)[] = [];
+  private readonly figures: (Figure | undefined)[] = [];
+  private readonly invariants = new TupleTable();
+  private readonly invariantValues: Element[] = [];
+  private readonly largeArguments = new Map<bigint, number>();
+  private readonly buffer = new Int32Array(64);
+  /** <AB>^-4 for each loop line of a form in dual points, else null. */
+  private readonly measure: Element | null;
+
+  constructor(
+    private readonly graph: Graph,
+    private readonly form: FormToCompile,
+  ) {
+    this.geometry = new Geometry(graph, form.k);
+    this.exterior = new Exterior(graph, form.k);
+    this.spinors = new Spinors(graph, this.geometry, form.n, form.squareSign);
+    this.definitions = definitionsOf(form.formula);
+    form.formula.definitions.forEach((definition, i) => {
+      this.numbers.set(definition.name, i);
+    });
+    this.measure = this.dualMeasure();
+  }
+
+  /** The top-level terms in order, each as one number with its sign. */
+  *terms(): Generator<Ref> {
+    for (const term of expandTerms(this.form.formula, this.form)) {
+      let value = this.value(term.expression, term);
+      if (this.measure !== null) value = this.exterior.multiply(value, this.measure);
+      const ref = this.exterior.value(value);
+      yield term.sign === 1 ? ref : negated(ref);
+    }
+  }
+
+  private value(expression: Expression, place: Place): Element {
+    const { exterior, graph, form } = this;
+    switch (expression.kind) {
+      case "integer":
+        return exterior.scalar(graph.constant(BigInt(expression.value), 1n, expression.span));
+      case "index":
+        return exterior.scalar(graph.constant(evaluateNumber(expression, place.bindings), 1n, expression.span));
+      case "add":
+        return exterior.add(expression.summands.map((summand) => this.value(summand, place)));
+      case "negate":
+        return exterior.negate(this.value(expression.operand, place));
+      case "multiply":
+        return this.product(expression.factors.map((factor) => this.value(factor, place)));
+      case "divide": {
+        const numerator = this.value(expression.numerator, place);
+        const inverse = this.inverse(this.value(expression.denominator, place), expression.denominator.span);
+        return exterior.multiply(numerator, exterior.scalar(inverse));
+      }
+      case "power":
+        return this.power(expression, place);
+      case "sum":
+      case "product": {
+        const values: Element[] = [];
+        for (const bindings of enumerateBindings(expression, place.bindings)) {
+          values.push(this.value(expression.body, { ...place, bindings }));
+        }
+        return expression.kind === "sum" ? exterior.add(values) : this.product(values);
+      }
+      case "cyc":
+        return exterior.add(cyclicPlaces(place, form.n).map((at) => this.value(expression.body, at)));
+      case "sym":
+        return exterior.add(symmetricPlaces(place, form.loops).map((at) => this.value(expression.body, at)));
+      case "call": {
+        const at = this.use(expression.name, expression.arguments, place);
+        return this.remember(this.scalars, at, () =>
+          this.value(scalarBody(this.definitions, expression.name), at.place),
+        );
+      }
+      case "unknown":
+        throw new Error(`value: expected a formula without unknowns, got ?${expression.name}`);
+      case "five":
+      case "delta":
+        return this.invariant(expression.kind, this.figure(expression.items, place).points, expression.span);
+      default:
+        return exterior.scalar(this.bracket(expression, place));
+    }
+  }
+
+  /** The product: numbers first, in the order of their nodes, so that equal products are shared however they are written. */
+  private product(factors: readonly Element[]): Element {
+    const { exterior, graph } = this;
+    const numbers: Ref[] = [];
+    let product: Element | null = null;
+    for (const factor of factors) {
+      const number = exterior.asScalar(factor);
+      if (number !== null) numbers.push(number);
+      else product = product === null ? factor : exterior.multiply(product, factor);
+    }
+    numbers.sort((a, b) => a - b);
+    const coefficient = exterior.scalar(numbers.reduce((a, b) => graph.multiply(a, b), graph.one));
+    return product === null ? coefficient : exterior.multiply(product, coefficient);
+  }
+
+  /** 1/denominator; an element with deltas has no inverse, and counts as a zero at every point. */
+  private inverse(denominator: Element, span: Span): Ref {
+    return this.graph.inverse(this.exterior.asScalar(denominator) ?? this.graph.zero, span);
+  }
+
+  private power(expression: Extract<Expression, { kind: "power" }>, place: Place): Element {
+    const { exterior, graph } = this;
+    const exponent = Number(evaluateNumber(expression.exponent, place.bindings));
+    const base = this.value(expression.base, place);
+    if (exponent < 0) return exterior.scalar(graph.power(this.inverse(base, expression.base.span), -exponent));
+    const number = exterior.asScalar(base);
+    if (number !== null) return exterior.scalar(graph.power(number, exponent));
+    let power = exterior.scalar(graph.one);
+    // Degrees add up, so this ends at zero after k factors unless the base has a part without deltas.
+    for (let i = 0; i < exponent && power.length > 0; i++) power = exterior.multiply(power, base);
+    return power;
+  }
+
+  /** [a b c d e] or delta(a b c d e), once for each list of points. */
+  private invariant(kind: "five" | "delta", points: readonly Ref[], span: Span): Element {
+    const { exterior, geometry, graph } = this;
+    points.forEach((point, i) => {
+      this.buffer[i] = point;
+    });
+    this.buffer[5] = kind === "five" ? 1 : 0;
+    const id = this.invariants.intern(this.buffer, 6);
+    const known = this.invariantValues[id];
+    if (known !== undefined) return known;
+    const brackets = geometry.fiveBrackets(points);
+    const row = this.form.k === 0 ? null : geometry.deltaRow(points, brackets);
+    let coefficient = graph.one;
+    if (kind === "five") {
+      const denominator = [...brackets].sort((a, b) => a - b).reduce((a, b) => graph.multiply(a, b), graph.one);
+      coefficient = graph.inverse(denominator, span);
+    }
+    const value = exterior.delta(coefficient, row);
+    this.invariantValues[id] = value;
+    return value;
+  }
+
+  private bracket(expression: Expression, place: Place): Ref {
+    const { geometry, spinors } = this;
+    const legs = (momenta: Parameters<typeof momentumLegs>[0]): number[] =>
+      momentumLegs(momenta, place.bindings, this.form.n, place.shift);
+    const end = (slot: SpinorEnd): SpinorLabel => (slot.kind === "label" ? this.label(slot.index, place) : 0);
+    switch (expression.kind) {
+      case "four":
+        return geometry.bracketOf(this.figure(expression.items, place));
+      case "angle":
+        return geometry.angle(this.figure(expression.items, place));
+      case "square":
+        return spinors.square(end(expression.left), end(expression.right), expression.span);
+      case "string": {
+        const middle = expression.middle.map(legs);
+        return spinors.string(expression.left, end(expression.first), middle, end(expression.last), expression.span);
+      }
+      case "mandelstam":
+        return spinors.mandelstam(legs(expression.momenta), expression.span);
+      case "distance": {
+        const [left, right] = [expression.left, expression.right].map((point) => this.dualLine(point, place));
+        return spinors.distance(left!, right!, expression.span);
+      }
+      default:
+        throw new Error(`bracket: expected a bracket, got ${expression.kind}`);
+    }
+  }
+
+  private dualLine(point: DualPoint, place: Place): DualLine {
+    if (point.kind === "label") return this.spinors.dualPoint(this.label(point.index, place));
+    return loopLineFigure(this.geometry, place.permutation[point.loop]!).points as unknown as DualLine;
+  }
+
+  private label(index: IndexExpression, place: Place): number {
+    if (index.terms.length === 0 && index.constant.length < 3) {
+      const { n } = this.form;
+      const residue = (Number(index.constant) + place.shift) % n;
+      return residue <= 0 ? residue + n : residue;
+    }
+    return evaluateLabel(index, place.bindings, this.form.n, place.shift);
+  }
+
+  private figure(items: readonly Item[], place: Place): Figure {
+    if (items.length === 1) return this.item(items[0]!, place);
+    const points: Ref[] = [];
+    const lines: Ref[] = [];
+    for (const item of items) {
+      const figure = this.item(item, place);
+      points.push(...figure.points);
+      lines.push(...figure.lines);
+    }
+    return { points, lines };
+  }
+
+  private item(item: Item, place: Place): Figure {
+    const { geometry } = this;
+    switch (item.kind) {
+      case "label":
+        return pointFigure(geometry.leg(this.label(item.index, place)));
+      case "loopPoint": {
+        const letter = item.letter.charCodeAt(0) - 65;
+        return pointFigure(geometry.loopPoint(2 * place.permutation[letter >> 1]! + (letter & 1)));
+      }
+      case "loopLine":
+        return loopLineFigure(geometry, place.permutation[item.loop]!);
+      case "referenceTwistor":
+        return pointFigure(geometry.referenceTwistor());
+      case "referenceLine":
+        return referenceLineFigure(geometry);
+      case "meet":
+        return this.meet(this.operand(item.left, place), this.operand(item.right, place));
+      case "named": {
+        const at = this.use(item.name, item.arguments, place);
+        return this.remember(this.figures, at, () => {
+          const value = this.definitions.get(item.name)!.value;
+          if (value.kind !== "geometry") throw new Error(`item: expected ${item.name} to be a point, line or plane`);
+          const { geometry: shape } = value;
+          return shape.kind === "meet" ? this.item(shape, at.place) : this.figure(shape.items, at.place);
+        });
+      }
+    }
+  }
+
+  private operand(operand: Operand, place: Place): Figure {
+    if (operand.kind === "group") return this.figure(operand.items, place);
+    const { n } = this.form;
+    const middle = this.label(operand.index, place);
+    const labels = [middle === 1 ? n : middle - 1, middle, middle === n ? 1 : middle + 1];
+    return { points: labels.map((label) => this.geometry.leg(label)), lines: [] };
+  }
+
+  private meet(left: Figure, right: Figure): Figure {
+    if (slotsOf(left) === 3 && slotsOf(right) === 3) {
+      return { points: [], lines: [this.geometry.meetOfPlanes(left, right)] };
+    }
+    const [line, plane] = slotsOf(left) === 2 ? [left, right] : [right, left];
+    return pointFigure(this.geometry.meetOfLineAndPlane(line, plane));
+  }
+
+  /** A use of a definition: where its body stands, and the number of this (name, arguments, shift, permutation). */
+  private use(name: string, values: readonly IndexExpression[], place: Place): { place: Place; id: number } {
+    const definition = this.definitions.get(name)!;
+    const at = definitionPlace(definition, values, place, this.form.n);
+    let length = 0;
+    this.buffer[length++] = this.numbers.get(name)!;
+    this.buffer[length++] = place.shift;
+    this.buffer[length++] = place.permutation.reduce((code, line) => code * 4 + line, 1);
+    const key = definition.parameters.length + length > this.buffer.length ? new Int32Array(256) : this.buffer;
+    key.set(this.buffer.subarray(0, length));
+    for (const parameter of definition.parameters) key[length++] = this.argumentCode(at.bindings.get(parameter)!);
+    return { place: at, id: this.uses.intern(key, length) };
+  }
+
+  private argumentCode(value: bigint): number {
+    if (value > -SMALL && value < SMALL) return Number(value);
+    let code = this.largeArguments.get(value);
+    if (code === undefined) {
+      code = SMALL + this.largeArguments.size;
+      this.largeArguments.set(value, code);
+    }
+    return code;
+  }
+
+  private remember<X>(known: (X | undefined)[], { id }: { id: number }, make: () => X): X {
+    const old = known[id];
+    if (old !== undefined) return old;
+    const made = make();
+    known[id] = made;
+    return made;
+  }
+
+  /** Where a form's loop lines stand in x2( ) alone, it is a form in dual points: its measure brings <AB>^-4 for each line. */
+  private dualMeasure(): Element | null {
+    const { graph, geometry, form, exterior } = this;
+    if (!isInDualPoints(form.formula)) return null;
+    const { span } = form.formula.expression;
+    let measure = graph.one;
+    for (let loop = 0; loop < form.loops; loop++) {
+      const angle = geometry.angle(loopLineFigure(geometry, loop));
+      measure = graph.multiply(measure, graph.power(graph.inverse(angle, span), 4));
+    }
+    return exterior.scalar(measure);
+  }
+}
+
+/** Whether loop lines occur, and in x2( ) only; definitions count where they are used. */
+function isInDualPoints(formula: Formula): boolean {
+  const seen = new Set<string>();
+  const stack: unknown[] = [formula.expression];
+  let inDistances = false;
+  for (let node = stack.pop(); node !== undefined; node = stack.pop()) {
+    const { kind, name } = node as { kind?: string; name?: string };
+    if (kind === "loopLine" || kind === "loopPoint") return false;
+    if (kind === "distance") {
+      const { left, right } = node as Extract<Expression, { kind: "distance" }>;
+      if (left.kind === "loopLine" || right.kind === "loopLine") inDistances = true;
+      continue;
+    }
+    if ((kind === "call" || kind === "named") && !seen.has(name!)) {
+      seen.add(name!);
+      stack.push(formula.definitions.find((definition) => definition.name === name)!.value);
+    }
+    for (const child of Object.values(node as object))
+      if (typeof child === "object" && child !== null) stack.push(child);
+  }
+  return inDistances;
+}
