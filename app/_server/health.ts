@@ -1,5 +1,5 @@
 /** Whether the server can do its work, for people and monitors. */
-import { engineVersion, protocolVersion } from "../../engine/checks";
+import { engineVersion, protocolVersion } from "../../engine/checks/versions";
 import type { Health } from "../_contract";
 import { database, read } from "./db";
 

@@ -1,4 +1,5 @@
 /** The domain: every call takes a principal first, decides itself what that one may do, and answers plain data. */
+export { entrySchema as entryJsonSchema } from "../../engine/notation";
 export { getAmplitude, getTriangle, listAmplitudes } from "./amplitudes";
 export { cancelCheck, getCheck, startCheck, watchCheck } from "./checks";
 export { bibtexOf, citationFormats } from "./citations";

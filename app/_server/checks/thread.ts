@@ -1,6 +1,7 @@
 /** The thread in which checks run: it can be stopped at any moment without harm, because it touches nothing but its messages. */
 import { parentPort } from "node:worker_threads";
-import { checkForm, engineVersion, protocolVersion } from "../../../engine/checks";
+import { checkWithCertificate } from "../../../engine/certificate";
+import { engineVersion, protocolVersion } from "../../../engine/checks";
 import { readEntryValue } from "../../../engine/notation";
 import type { CheckTask, ThreadMessage } from "./engine";
 
@@ -22,7 +23,7 @@ function run(task: CheckTask): ThreadMessage {
   });
   let last = 0;
   let lastStage = "";
-  const report = checkForm(read.value, {
+  const report = checkWithCertificate(read.value, {
     seed: task.seed,
     accepted,
     progress: ({ stage, done, total }) => {

@@ -3,14 +3,14 @@ import { existsSync, mkdirSync, readdirSync, renameSync, rmSync, statSync, utime
 import { join } from "node:path";
 import { root } from "./install.mjs";
 
+const server = ["engine", "app/_server", "app/_contract", "generated", "prisma"];
+
 /** The programs: their entry point, what they are made of, and their name under build/. */
 export const programs = {
   equiform: { entry: "app/_server/cli/main.ts", sources: ["engine", "app/_server/cli"] },
-  worker: {
-    entry: "app/_server/checks/worker.ts",
-    sources: ["engine", "app/_server", "app/_contract", "generated", "prisma"],
-  },
+  worker: { entry: "app/_server/checks/worker.ts", sources: server },
   "check-thread": { entry: "app/_server/checks/thread.ts", sources: ["engine", "app/_server/checks"] },
+  seed: { entry: "prisma/seed.ts", sources: server },
 };
 
 /** Newest modification time of a folder and everything in it, in milliseconds; a removed file counts through its folder. */

@@ -1,0 +1,9 @@
+// `npm start`: from a fresh clone to a served page, with nothing to configure.
+import { buildPages, migrate, prepareCode } from "./prepare.mjs";
+import { run } from "./run.mjs";
+
+process.env.NODE_ENV = "production";
+await prepareCode(["worker", "check-thread", "seed"]);
+migrate();
+buildPages();
+await run("start");
