@@ -5,7 +5,14 @@
  * sources of truth are named.
  */
 import { z } from "zod";
-import { type AcceptedForm, type CheckRecord, engineVersion, pointsVersion, protocolVersion, reportSchema } from "../checks";
+import {
+  type AcceptedForm,
+  type CheckRecord,
+  engineVersion,
+  pointsVersion,
+  protocolVersion,
+  reportSchema,
+} from "../checks";
 import { digestOf, type EntryDocument, entryOf, type Form } from "../notation";
 
 export const certificateFormat = "equiform-certificate-1";
@@ -56,7 +63,8 @@ export function certify(form: Form, seed: string, { report, evidence, compared }
 
 const embed = ({ name, form }: AcceptedForm) => ({ name, digest: digestOf(form), entry: plain(entryOf(form)) });
 
-const plain = (entry: EntryDocument): Record<string, unknown> => JSON.parse(JSON.stringify(entry)) as Record<string, unknown>;
+const plain = (entry: EntryDocument): Record<string, unknown> =>
+  JSON.parse(JSON.stringify(entry)) as Record<string, unknown>;
 
 function statement(summary: string): string {
   return `${summary} The samples follow from the seed; "equiform replay" draws them again and repeats every comparison and mark.`;

@@ -12,4 +12,3 @@ export function checkWithCertificate(form: Form, options: CheckOptions): Report 
   if (record.report.verdict === "unreadable") return record.report;
   return { ...record.report, certificate: { ...certify(form, options.seed, record) } };
 }
-

@@ -30,24 +30,57 @@ export function replay(text: string, cancelled?: () => boolean): Result<Replay> 
     return failure(fault("not-json", "The certificate is not JSON.", "Give the file as it was downloaded."));
   }
   const parsed = certificateSchema.safeParse(value);
-  if (!parsed.success) return failure(...parsed.error.issues.slice(0, mostDifferences).map((issue) => fault("not-a-certificate", `${issue.path.join(".") || "document"}: ${issue.message}`, "Give a certificate of this program, unchanged.")));
+  if (!parsed.success)
+    return failure(
+      ...parsed.error.issues
+        .slice(0, mostDifferences)
+        .map((issue) =>
+          fault(
+            "not-a-certificate",
+            `${issue.path.join(".") || "document"}: ${issue.message}`,
+            "Give a certificate of this program, unchanged.",
+          ),
+        ),
+    );
   const certificate = parsed.data;
   const versions = { points: pointsVersion, protocol: protocolVersion, engine: engineVersion };
   for (const name of ["points", "protocol"] as const) {
     if (certificate.versions[name] !== versions[name])
-      return failure(fault("other-version", `The certificate was made with version ${certificate.versions[name]} of ${name}; this program has version ${versions[name]}.`, "Replay it with a program of that version."));
+      return failure(
+        fault(
+          "other-version",
+          `The certificate was made with version ${certificate.versions[name]} of ${name}; this program has version ${versions[name]}.`,
+          "Replay it with a program of that version.",
+        ),
+      );
   }
   const subject = readEntryValue(certificate.subject.entry);
   if (!subject.ok) return subject;
   const accepted: AcceptedForm[] = [];
   for (const { name, entry, digest } of certificate.compared.forms) {
     const form = readEntryValue(entry);
-    if (!form.ok) return failure(fault("compared-form", `The embedded form ${name} is not readable.`, "Give the certificate unchanged."), ...form.diagnostics);
-    if (digestOf(form.value) !== digest) return failure(fault("compared-form", `The embedded form ${name} does not have the digest stated for it.`, "Give the certificate unchanged."));
+    if (!form.ok)
+      return failure(
+        fault("compared-form", `The embedded form ${name} is not readable.`, "Give the certificate unchanged."),
+        ...form.diagnostics,
+      );
+    if (digestOf(form.value) !== digest)
+      return failure(
+        fault(
+          "compared-form",
+          `The embedded form ${name} does not have the digest stated for it.`,
+          "Give the certificate unchanged.",
+        ),
+      );
     accepted.push({ name, form: form.value });
   }
   const { seed } = certificate;
-  const record = checkForm(subject.value, { seed, accepted, sources: certificate.compared.sources, ...(cancelled ? { cancelled } : {}) });
+  const record = checkForm(subject.value, {
+    seed,
+    accepted,
+    sources: certificate.compared.sources,
+    ...(cancelled ? { cancelled } : {}),
+  });
   const again: Certificate = { ...certify(subject.value, seed, record), versions: certificate.versions };
   return success({ certificate, differences: differences(certificate, again) });
 }
@@ -58,7 +91,9 @@ const fault = (code: string, message: string, help: string): Diagnostic => ({ co
 function differences(stated: unknown, recomputed: unknown, path = ""): Difference[] {
   if (isObject(stated) && isObject(recomputed)) {
     const keys = [...new Set([...Object.keys(stated), ...Object.keys(recomputed)])];
-    return keys.flatMap((key) => differences(stated[key], recomputed[key], path === "" ? key : `${path}.${key}`)).slice(0, mostDifferences);
+    return keys
+      .flatMap((key) => differences(stated[key], recomputed[key], path === "" ? key : `${path}.${key}`))
+      .slice(0, mostDifferences);
   }
   return Object.is(stated, recomputed) ? [] : [{ path, stated: shown(stated), recomputed: shown(recomputed) }];
 }

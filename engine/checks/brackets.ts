@@ -36,7 +36,8 @@ export function pointText(p: Point): string {
 /** Items in canonical order, two points of one loop line written as its word. */
 export function itemsText(points: readonly Point[]): string {
   const words: { readonly rank: number; readonly label: number; readonly text: string }[] = [];
-  const has = (line: number, which: number) => points.some((p) => p.kind === "letter" && p.line === line && p.which === which);
+  const has = (line: number, which: number) =>
+    points.some((p) => p.kind === "letter" && p.line === line && p.which === which);
   for (const p of points) {
     if (p.kind === "letter") {
       const whole = has(p.line, 0) && has(p.line, 1);
@@ -85,7 +86,8 @@ export function factorsOfFour(points: readonly Point[]): readonly (readonly Poin
     const [a, b] = p.line;
     if (p.line.length === 2 && a !== undefined && b !== undefined) {
       for (const [shared, left] of [[a, b] as const, [b, a] as const])
-        if (others.some((q) => same(q, shared))) return [...factorsOfFour([left, ...others]), ...factorsOfFour([shared, ...p.plane])];
+        if (others.some((q) => same(q, shared)))
+          return [...factorsOfFour([left, ...others]), ...factorsOfFour([shared, ...p.plane])];
     }
     const inPlane = p.plane.filter((q) => others.some((o) => same(o, q)));
     if (inPlane.length === 2) {
@@ -108,11 +110,18 @@ export function isPhysicalFour(points: readonly Point[], n: number): boolean {
   }
   const [a, b, c, d] = labels as [number, number, number, number];
   return (
-    (adjacent(a, b, n) && adjacent(c, d, n)) || (adjacent(a, c, n) && adjacent(b, d, n)) || (adjacent(a, d, n) && adjacent(b, c, n))
+    (adjacent(a, b, n) && adjacent(c, d, n)) ||
+    (adjacent(a, c, n) && adjacent(b, d, n)) ||
+    (adjacent(a, d, n) && adjacent(b, c, n))
   );
 }
 
 export const adjacent = (a: number, b: number, n: number): boolean => (a - b + n) % n === 1 || (b - a + n) % n === 1;
 
 export const holdsReference = (points: readonly Point[]): boolean =>
-  points.some((p) => p.kind === "star" || p.kind === "reference" || ((p.kind === "meet" || p.kind === "planes") && /[*X]/.test(p.text)));
+  points.some(
+    (p) =>
+      p.kind === "star" ||
+      p.kind === "reference" ||
+      ((p.kind === "meet" || p.kind === "planes") && /[*X]/.test(p.text)),
+  );

@@ -75,14 +75,19 @@ export function checkForm(form: Form, options: CheckOptions): CheckRecord {
       step,
       budget: options.budget ?? defaultBudget,
     });
-    if ("vanishing" in outcome) return { report: unreadable([vanishingDenominator(outcome.vanishing, form, n)]), evidence: [], compared: [] };
+    if ("vanishing" in outcome)
+      return { report: unreadable([vanishingDenominator(outcome.vanishing, form, n)]), evidence: [], compared: [] };
     for (const a of accepted) if (outcome.comparisons.some((c) => c.with === a.name)) compared.set(a.name, a);
     results.push(outcome);
   }
   const shown = results.find((r) => r.n >= 6) ?? results.at(-1);
   if (shown === undefined) throw new Error("checkForm: a form with no n to check");
   step("fingerprint");
-  return { report: reportOf(form, digest, results, shown), evidence: results.map((r) => r.evidence), compared: [...compared.values()] };
+  return {
+    report: reportOf(form, digest, results, shown),
+    evidence: results.map((r) => r.evidence),
+    compared: [...compared.values()],
+  };
 }
 
 /** The report of input that could not be read, or that has no value at any point. */
@@ -102,7 +107,12 @@ export function unreadable(diagnostics: readonly Diagnostic[]): Report {
       ...(d.help === undefined ? {} : { help: d.help }),
       ...(d.suggestion === undefined
         ? {}
-        : { suggestion: { span: [d.suggestion.span[0], d.suggestion.span[1]] as [number, number], replacement: d.suggestion.replacement } }),
+        : {
+            suggestion: {
+              span: [d.suggestion.span[0], d.suggestion.span[1]] as [number, number],
+              replacement: d.suggestion.replacement,
+            },
+          }),
     })),
     summary: `Not readable: ${first?.message ?? "no reason is known."}${more}`,
   };
@@ -123,7 +133,9 @@ function vanishingDenominator(span: readonly [number, number], form: Form, n: nu
 function comparable(form: Form, other: Form, n: number): boolean {
   const { amplitude } = other;
   const inRange =
-    typeof amplitude.n === "number" ? amplitude.n === n : n >= amplitude.n.from && (amplitude.n.to === null || n <= amplitude.n.to);
+    typeof amplitude.n === "number"
+      ? amplitude.n === n
+      : n >= amplitude.n.from && (amplitude.n.to === null || n <= amplitude.n.to);
   return (
     inRange &&
     amplitude.k === form.amplitude.k &&
@@ -186,7 +198,8 @@ function marksOf(results: readonly SizeResult[], shown: SizeResult): Report["mar
     if (mark === undefined) continue;
     const failing = results.find((r) => r.marks[code]?.state === "fails");
     const there = failing?.marks[code];
-    if (there !== undefined && failing !== undefined && mark.state !== "fails") marks[code] = { ...there, evidence: `At n = ${failing.n}: ${there.evidence}` };
+    if (there !== undefined && failing !== undefined && mark.state !== "fails")
+      marks[code] = { ...there, evidence: `At n = ${failing.n}: ${there.evidence}` };
     else if (results.length > 1) marks[code] = { ...mark, evidence: `At n = ${shown.n}: ${mark.evidence}` };
     else marks[code] = mark;
   }
@@ -210,14 +223,17 @@ function summary(
   if (verdict === "disagrees") {
     const where = results.find((r) => r.verdict === "disagrees");
     const at = where !== undefined && results.length > 1 ? ` at n = ${where.n}` : "";
-    const broken = where === undefined ? [] : markChecks.filter((m) => m.constraint && where.marks[m.code]?.state === "fails");
+    const broken =
+      where === undefined ? [] : markChecks.filter((m) => m.constraint && where.marks[m.code]?.state === "fails");
     if (diagnosis[0] !== undefined) return `Disagrees${at}: ${diagnosis[0].message}`;
     if (broken[0] !== undefined) return `Disagrees${at}: an amplitude ${broken[0].says}, and this form does not.`;
     return `Disagrees${at} with ${list(comparisons.filter((c) => !c.agrees).map((c) => c.with))}.`;
   }
   const reason = results.find((r) => r.verdict === "undecided")?.reason;
-  if (reason === "budget") return "Undecided: every comparison would take more operations than the budget of this check.";
-  if (reason === "bound") return "Undecided: the expressions are so large that no number of points modulo 31-bit primes gives the bound asked for.";
+  if (reason === "budget")
+    return "Undecided: every comparison would take more operations than the budget of this check.";
+  if (reason === "bound")
+    return "Undecided: the expressions are so large that no number of points modulo 31-bit primes gives the bound asked for.";
   return "Undecided: there is no source of truth and no accepted form to compare with, and no constraint fails.";
 }
 
@@ -225,4 +241,3 @@ function list(names: readonly string[]): string {
   if (names.length <= 1) return names[0] ?? "nothing";
   return `${names.slice(0, -1).join(", ")} and ${names.at(-1)}`;
 }
-

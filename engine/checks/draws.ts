@@ -15,7 +15,12 @@ export function drawSample(seed: string, purpose: string, shape: AmplitudeSize, 
 }
 
 /** `count` points that share one prime: what a ratio that should be constant is tried on. */
-export function drawOverOnePrime(seed: string, purpose: string, shape: AmplitudeSize, count: number): readonly Sample[] {
+export function drawOverOnePrime(
+  seed: string,
+  purpose: string,
+  shape: AmplitudeSize,
+  count: number,
+): readonly Sample[] {
   const random = randomness(`${seed}|${purpose}|${sizeKey(shape)}|one prime`);
   const prime = draw31BitPrime(random);
   const field = smallPrimeField(prime);

@@ -47,10 +47,12 @@ export function prepare(form: FormAtN): PreparedForm {
 function countOperations(form: FormAtN): number {
   const field = smallPrimeField(2 ** 31 - 1);
   let count = 0;
-  const counted = <A extends readonly unknown[], R>(operation: (...args: A) => R) => (...args: A): R => {
-    count += 1;
-    return operation(...args);
-  };
+  const counted =
+    <A extends readonly unknown[], R>(operation: (...args: A) => R) =>
+    (...args: A): R => {
+      count += 1;
+      return operation(...args);
+    };
   const counting: Field<number> = {
     ...field,
     add: counted(field.add),

@@ -1,9 +1,26 @@
 /** The poles of a form: the brackets in its denominators, term by term, told apart as physical and spurious (ENGINE section 5). */
 import type { FormAtN } from "../evaluate/form";
 import { enumerateBindings } from "../notation/bindings";
-import { cyclicPlaces, definitionPlace, definitionsOf, expandTerms, type Place, scalarBody, symmetricPlaces } from "../notation/expand";
+import {
+  cyclicPlaces,
+  definitionPlace,
+  definitionsOf,
+  expandTerms,
+  type Place,
+  scalarBody,
+  symmetricPlaces,
+} from "../notation/expand";
 import { evaluateLabel, evaluateNumber, momentumLegs } from "../notation/indices";
-import type { Definition, DualPoint, Expression, Item, MeetItem, NamedItem, Operand, SpinorEnd } from "../notation/tree";
+import type {
+  Definition,
+  DualPoint,
+  Expression,
+  Item,
+  MeetItem,
+  NamedItem,
+  Operand,
+  SpinorEnd,
+} from "../notation/tree";
 import {
   adjacent,
   factorsOfFour,
@@ -42,7 +59,12 @@ export function findPoles(form: FormAtN): readonly Pole[] {
   return [...poles].map(([key, terms]) => {
     const divisor = finder.divisors.get(key);
     if (divisor === undefined) throw new Error(`findPoles: no divisor ${key}`);
-    return { bracket: divisor.text, kind: divisor.physical ? "physical" : "spurious", reference: divisor.reference, terms };
+    return {
+      bracket: divisor.text,
+      kind: divisor.physical ? "physical" : "spurious",
+      reference: divisor.reference,
+      terms,
+    };
   });
 }
 
@@ -77,7 +99,9 @@ class PoleFinder {
         return combined(none, base, power);
       }
       case "sum":
-        return smallest([...enumerateBindings(e, at.bindings)].map((bindings) => this.orders(e.body, { ...at, bindings })));
+        return smallest(
+          [...enumerateBindings(e, at.bindings)].map((bindings) => this.orders(e.body, { ...at, bindings })),
+        );
       case "product":
         return [...enumerateBindings(e, at.bindings)].reduce<Orders>(
           (total, bindings) => combined(total, this.orders(e.body, { ...at, bindings }), 1),
@@ -93,7 +117,10 @@ class PoleFinder {
         return this.#fours([this.#points(e.items, at)], 1);
       case "five": {
         const points = this.#points(e.items, at);
-        return this.#fours(points.map((_, left) => points.filter((_, i) => i !== left)), -1);
+        return this.#fours(
+          points.map((_, left) => points.filter((_, i) => i !== left)),
+          -1,
+        );
       }
       case "delta":
         return none;
@@ -102,9 +129,16 @@ class PoleFinder {
       case "square":
         return this.#square(e.left, e.right, at);
       case "string":
-        return this.#whole(`${open[e.left]}${this.#end(e.first, at)}|${e.middle
-          .map((m) => momentumLegs(m, at.bindings, this.form.n, at.shift).sort((a, b) => a - b).join("+"))
-          .join("|")}|${this.#end(e.last, at)}${close[e.right]}`, false);
+        return this.#whole(
+          `${open[e.left]}${this.#end(e.first, at)}|${e.middle
+            .map((m) =>
+              momentumLegs(m, at.bindings, this.form.n, at.shift)
+                .sort((a, b) => a - b)
+                .join("+"),
+            )
+            .join("|")}|${this.#end(e.last, at)}${close[e.right]}`,
+          false,
+        );
       case "mandelstam":
         return this.#mandelstam(momentumLegs(e.momenta, at.bindings, this.form.n, at.shift));
       case "distance":
@@ -115,12 +149,18 @@ class PoleFinder {
   /** A denominator that is a sum is a divisor of its own: its summands say nothing about where it vanishes. */
   #denominator(e: Expression, at: Place): Orders {
     if (e.kind === "negate") return this.#denominator(e.operand, at);
-    if (e.kind === "multiply") return e.factors.reduce<Orders>((total, f) => combined(total, this.#denominator(f, at), 1), none);
+    if (e.kind === "multiply")
+      return e.factors.reduce<Orders>((total, f) => combined(total, this.#denominator(f, at), 1), none);
     if (e.kind === "call") {
       const definition = this.#definitions.get(e.name);
-      if (definition !== undefined) return this.#denominator(scalarBody(this.#definitions, e.name), definitionPlace(definition, e.arguments, at, this.form.n));
+      if (definition !== undefined)
+        return this.#denominator(
+          scalarBody(this.#definitions, e.name),
+          definitionPlace(definition, e.arguments, at, this.form.n),
+        );
     }
-    if (e.kind === "add" || e.kind === "sum" || e.kind === "cyc" || e.kind === "sym") return this.#whole(this.#sumText(e, at), false);
+    if (e.kind === "add" || e.kind === "sum" || e.kind === "cyc" || e.kind === "sym")
+      return this.#whole(this.#sumText(e, at), false);
     return this.orders(e, at);
   }
 
@@ -168,7 +208,11 @@ class PoleFinder {
   #square(left: SpinorEnd, right: SpinorEnd, at: Place): Orders {
     const ends = [this.#end(left, at), this.#end(right, at)].sort((a, b) => Number(a) - Number(b));
     const [a, b] = ends.map(Number);
-    return this.#whole(`[${ends.join(" ")}]`, !ends.includes("*") && adjacent(a ?? 0, b ?? 0, this.form.n), ends.includes("*"));
+    return this.#whole(
+      `[${ends.join(" ")}]`,
+      !ends.includes("*") && adjacent(a ?? 0, b ?? 0, this.form.n),
+      ends.includes("*"),
+    );
   }
 
   /** s of legs S is s of the other legs too: the name is the shorter of the two, or the one that holds the lowest leg. */
@@ -234,7 +278,8 @@ class PoleFinder {
 
   #named(item: NamedItem, at: Place): readonly Point[] {
     const definition = this.#definitions.get(item.name);
-    if (definition?.value.kind !== "geometry") throw new Error(`findPoles: expected ${item.name} to be a point, line or plane`);
+    if (definition?.value.kind !== "geometry")
+      throw new Error(`findPoles: expected ${item.name} to be a point, line or plane`);
     const place = definitionPlace(definition, item.arguments, at, this.form.n);
     const { geometry } = definition.value;
     return geometry.kind === "meet" ? this.#meet(geometry, place) : this.#points(geometry.items, place);

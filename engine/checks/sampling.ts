@@ -34,7 +34,12 @@ export function drawSamples(
   count: number,
   onProgress: (done: number) => void = () => {},
 ): Sampled | VanishingDenominator {
-  const kept = { samples: [] as Sample[], draws: [] as number[], values: [] as Value[], truths: comparands.map(() => [] as number[]) };
+  const kept = {
+    samples: [] as Sample[],
+    draws: [] as number[],
+    values: [] as Value[],
+    truths: comparands.map(() => [] as number[]),
+  };
   let badForTruth = 0;
   for (let draw = 0; kept.samples.length < count; draw++) {
     const sample = drawSample(seed, "sample", prepared.form, draw);

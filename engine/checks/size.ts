@@ -70,7 +70,9 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
     return diagnose(found);
   };
 
-  if (!weights.homogeneousInEta || (weights.degree !== null && weights.degree !== form.k)) return withoutValue(form, diagnosing(null, []));
+  const degree = form.negativeLegs === null ? form.k : 0;
+  if (!weights.homogeneousInEta || (weights.degree !== null && weights.degree !== degree))
+    return withoutValue(form, diagnosing(null, []));
 
   const poles = findPoles(form);
   const prepared = prepare(form);
@@ -84,7 +86,16 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
   options.step("values");
   const sampled = drawSamples(seed, prepared, truths.comparands, count);
   if ("span" in sampled) return { vanishing: sampled.span };
-  const bench: Bench = { seed, form, target, prepared, samples: sampled.samples, values: sampled.values, poles, miss: own };
+  const bench: Bench = {
+    seed,
+    form,
+    target,
+    prepared,
+    samples: sampled.samples,
+    values: sampled.values,
+    poles,
+    miss: own,
+  };
   const comparisons = truths.comparands.map((c, i) => compare(form.n, c, sampled, i, miss[i] ?? 1));
   const disagrees = comparisons.some((c) => !c.agrees);
 
@@ -96,8 +107,13 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
   const broken = markChecks.filter((check) => check.constraint && marks[check.code]?.state === "fails");
   const uncertain = needed.includes(null);
   const verdict =
-    disagrees || broken.length > 0 || weights.faults.length > 0 ? "disagrees" : comparisons.length === 0 || uncertain ? "undecided" : "agrees";
-  const reason = verdict !== "undecided" ? undefined : uncertain ? "bound" : truths.leftOut > 0 ? "budget" : "nothing-to-compare";
+    disagrees || broken.length > 0 || weights.faults.length > 0
+      ? "disagrees"
+      : comparisons.length === 0 || uncertain
+        ? "undecided"
+        : "agrees";
+  const reason =
+    verdict !== "undecided" ? undefined : uncertain ? "bound" : truths.leftOut > 0 ? "budget" : "nothing-to-compare";
   return {
     n: form.n,
     verdict,
@@ -175,7 +191,11 @@ function compare(n: number, comparand: Comparand, sampled: Sampled, index: numbe
 function evidenceOf(n: number, comparands: readonly Comparand[], sampled: Sampled): SizeEvidence {
   return {
     n,
-    samples: sampled.samples.map(({ prime }, i) => ({ draw: sampled.draws[i] ?? 0, prime, value: sampled.values[i]?.sum ?? 0 })),
+    samples: sampled.samples.map(({ prime }, i) => ({
+      draw: sampled.draws[i] ?? 0,
+      prime,
+      value: sampled.values[i]?.sum ?? 0,
+    })),
     truths: comparands.map((c, i) => ({ with: c.name, values: sampled.truths[i] ?? [] })),
   };
 }

@@ -54,7 +54,14 @@ const mostFaults = 20;
 
 /** Names of the entries of a weight, in order. */
 export function weightNames(n: number, loops: number): readonly string[] {
-  return [...Array.from({ length: n }, (_, i) => String(i + 1)), ..."ABCDEFGH".slice(0, 2 * loops), "*", "X", "infinity twistor", "eta"];
+  return [
+    ...Array.from({ length: n }, (_, i) => String(i + 1)),
+    ..."ABCDEFGH".slice(0, 2 * loops),
+    "*",
+    "X",
+    "infinity twistor",
+    "eta",
+  ];
 }
 
 /** Infers the weights of a form at one n and compares them with those of its amplitude, component and target. */
@@ -158,13 +165,22 @@ class Inference {
       case "sum":
         return this.#same(this.#images(e, c).map((image) => [e.body.span, this.#expression(e.body, image)] as const));
       case "product":
-        return this.#images(e, c).reduce<Weight>((w, image) => sum(w, this.#expression(e.body, image), 1), this.#zero());
+        return this.#images(e, c).reduce<Weight>(
+          (w, image) => sum(w, this.#expression(e.body, image), 1),
+          this.#zero(),
+        );
       case "cyc":
-        return this.#same(cyclicPlaces(c, this.form.n).map((at) => [e.body.span, this.#expression(e.body, at)] as const));
+        return this.#same(
+          cyclicPlaces(c, this.form.n).map((at) => [e.body.span, this.#expression(e.body, at)] as const),
+        );
       case "sym":
-        return this.#same(symmetricPlaces(c, this.form.loops).map((at) => [e.body.span, this.#expression(e.body, at)] as const));
+        return this.#same(
+          symmetricPlaces(c, this.form.loops).map((at) => [e.body.span, this.#expression(e.body, at)] as const),
+        );
       case "call":
-        return this.#call(e.name, e.arguments, c, (inner) => this.#expression(scalarBody(this.#definitions, e.name), inner));
+        return this.#call(e.name, e.arguments, c, (inner) =>
+          this.#expression(scalarBody(this.#definitions, e.name), inner),
+        );
       case "four":
         return this.#items(e.items, c);
       case "five":
@@ -174,12 +190,26 @@ class Inference {
       case "angle":
         return sum(this.#items(e.items, c), this.#entry(this.#star + 2, 1), 1);
       case "square":
-        return this.#ends([["square", e.left], ["square", e.right]], -3, c);
+        return this.#ends(
+          [
+            ["square", e.left],
+            ["square", e.right],
+          ],
+          -3,
+          c,
+        );
       case "string": {
         // The contractions alternate between angle and square, and begin with the bracket of the first end.
         const contractions = e.middle.length + 1;
         const angles = Math.floor((contractions + (e.left === "angle" ? 1 : 0)) / 2);
-        return this.#ends([[e.left, e.first], [e.right, e.last]], angles - 3 * (contractions - angles), c);
+        return this.#ends(
+          [
+            [e.left, e.first],
+            [e.right, e.last],
+          ],
+          angles - 3 * (contractions - angles),
+          c,
+        );
       }
       case "mandelstam":
       case "distance":
@@ -225,7 +255,12 @@ class Inference {
   }
 
   /** Weight of a definition's body, worked out once for each list of arguments and each place that `cyc` and `sym` move it to. */
-  #call(name: string, args: readonly IndexExpression[], c: Place, body: (inner: Place, d: Definition) => Weight): Weight {
+  #call(
+    name: string,
+    args: readonly IndexExpression[],
+    c: Place,
+    body: (inner: Place, d: Definition) => Weight,
+  ): Weight {
     const definition = this.#definitions.get(name);
     if (definition === undefined) throw new Error(`checkWeights: expected ${name} to be defined`);
     const inner = definitionPlace(definition, args, c, this.form.n);
@@ -298,7 +333,11 @@ class Inference {
     increase(w, evaluateLabel(index, c.bindings, this.form.n, c.shift) - 1, by);
   }
 
-  #ends(ends: readonly (readonly ["angle" | "square", SpinorEnd | DualPoint])[], infinity: number, c: Place): Int32Array {
+  #ends(
+    ends: readonly (readonly ["angle" | "square", SpinorEnd | DualPoint])[],
+    infinity: number,
+    c: Place,
+  ): Int32Array {
     const w = this.#entry(this.#star + 2, infinity);
     for (const [side, end] of ends) {
       if (end.kind === "label") this.#addLabel(w, end.index, side === "angle" ? 1 : -1, c);

@@ -1,9 +1,9 @@
 /** `check`: the whole check of entry documents. */
 import { readdir } from "node:fs/promises";
 import { join } from "node:path";
+import { certify } from "../certificate";
 import { type AcceptedForm, checkForm, unreadable } from "../checks";
 import type { Report } from "../checks/report";
-import { certify } from "../certificate";
 import { canonicalJson, readEntry } from "../notation";
 import type { Diagnostic } from "../result";
 import type { Call, Command, Exit } from "./command";
@@ -37,7 +37,10 @@ async function run(call: Call): Promise<Exit> {
     if ("diagnostics" in read) return fail(call, read.diagnostics);
     accepted.push(...read.forms);
   }
-  if (out !== null && call.positional.length > 1) return fail(call, [{ code: "usage", message: "--certificate takes one FILE.", help: "Check the files one by one." }]);
+  if (out !== null && call.positional.length > 1)
+    return fail(call, [
+      { code: "usage", message: "--certificate takes one FILE.", help: "Check the files one by one." },
+    ]);
   const reports: (Report & { file?: string })[] = [];
   const texts: string[] = [];
   for (const file of call.positional) {
@@ -51,14 +54,20 @@ async function run(call: Call): Promise<Exit> {
   return severity.find((exit) => found.includes(exit)) ?? 0;
 }
 
-async function checkFile(file: string, accepted: readonly AcceptedForm[], out: string | null, call: Call): Promise<{ report: Report; text: string }> {
+async function checkFile(
+  file: string,
+  accepted: readonly AcceptedForm[],
+  out: string | null,
+  call: Call,
+): Promise<{ report: Report; text: string }> {
   const text = await readText(file, call.io);
   if (!text.ok) return { report: unreadable(text.diagnostics), text: "" };
   const form = readEntry(text.value);
   if (!form.ok) return { report: unreadable(form.diagnostics), text: text.value };
   const seed = freshSeed();
   const progress = call.io.stderr.isTTY
-    ? ({ stage, done, total }: { stage: string; done: number; total: number }) => call.io.stderr.write(`\r${file}: ${stage} ${done}/${total}   `)
+    ? ({ stage, done, total }: { stage: string; done: number; total: number }) =>
+        call.io.stderr.write(`\r${file}: ${stage} ${done}/${total}   `)
     : undefined;
   const record = checkForm(form.value, { seed, accepted, ...(progress === undefined ? {} : { progress }) });
   if (progress !== undefined) call.io.stderr.write(`\r${" ".repeat(file.length + 40)}\r`);
@@ -72,7 +81,10 @@ async function checkFile(file: string, accepted: readonly AcceptedForm[], out: s
 }
 
 /** Every *.json below a folder, read as entry documents; a file that is none is a fault. */
-async function readLibrary(folder: string, call: Call): Promise<{ forms: AcceptedForm[] } | { diagnostics: Diagnostic[] }> {
+async function readLibrary(
+  folder: string,
+  call: Call,
+): Promise<{ forms: AcceptedForm[] } | { diagnostics: Diagnostic[] }> {
   const forms: AcceptedForm[] = [];
   const diagnostics: Diagnostic[] = [];
   let names: string[];

@@ -99,7 +99,8 @@ export function parseCall(command: Command, words: readonly string[], io: Io): C
   }
   if (values.has("help")) return "help";
   if (positional.length < command.fewestPositional) throw new Usage(`expected ${command.positional}`);
-  if (positional.length > command.mostPositional) throw new Usage(`too many arguments: ${positional.slice(command.mostPositional).join(" ")}`);
+  if (positional.length > command.mostPositional)
+    throw new Usage(`too many arguments: ${positional.slice(command.mostPositional).join(" ")}`);
   return {
     positional,
     option: (name) => values.get(name)?.at(-1) ?? null,

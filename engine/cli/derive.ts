@@ -9,7 +9,8 @@ export const derive: Command = {
   positional: "",
   fewestPositional: 0,
   mostPositional: 0,
-  summary: "Writes a form of an amplitude by recursion, vertex expansion or local integrands, and prints its entry document.",
+  summary:
+    "Writes a form of an amplitude by recursion, vertex expansion or local integrands, and prints its entry document.",
   options: [
     { name: "n", value: "N", help: "number of legs" },
     { name: "k", value: "K", help: "degree: N^kMHV" },
@@ -27,7 +28,14 @@ export const derive: Command = {
     const direction = (["forward", "backward"] as const).find((d) => d === (call.option("direction") ?? "forward"));
     if (direction === undefined) throw new Usage("--direction: expected forward or backward");
     const leg = integerOption(call, "leg", 1, n);
-    const derived = deriveForm({ n, k, loops: integerOption(call, "loops", 0, 4) ?? 0, method, direction, ...(leg === null ? {} : { leg }) });
+    const derived = deriveForm({
+      n,
+      k,
+      loops: integerOption(call, "loops", 0, 4) ?? 0,
+      method,
+      direction,
+      ...(leg === null ? {} : { leg }),
+    });
     if (!derived.ok) {
       if (call.json) printJson(call, { diagnostics: derived.diagnostics });
       else call.io.stderr.write(`${diagnosticsText(derived.diagnostics, null)}\n`);

@@ -25,9 +25,17 @@ export const digest: Command = {
     const sizes = sizesOf(form.value, 10);
     const at = sizes.find((n) => n >= 6) ?? sizes.at(-1) ?? 4;
     const print = fingerprint(formAt(form.value, at));
-    const result = { amplitude: amplitudeKey(form.value), digest: digestOf(form.value), at, fingerprint: print.kind === "fingerprint" ? print.text : null };
+    const result = {
+      amplitude: amplitudeKey(form.value),
+      digest: digestOf(form.value),
+      at,
+      fingerprint: print.kind === "fingerprint" ? print.text : null,
+    };
     if (call.json) printJson(call, result);
-    else call.io.stdout.write(`${result.digest}\n${result.fingerprint ?? "a denominator vanishes at every public point"} (${result.amplitude}, n = ${at})\n`);
+    else
+      call.io.stdout.write(
+        `${result.digest}\n${result.fingerprint ?? "a denominator vanishes at every public point"} (${result.amplitude}, n = ${at})\n`,
+      );
     return result.fingerprint === null ? 2 : 0;
   },
 };

@@ -31,7 +31,8 @@ export async function main(words: readonly string[], io: Io): Promise<Exit> {
     return await command.run(call);
   } catch (error) {
     if (!(error instanceof Usage)) throw error;
-    if (rest.includes("--json")) io.stdout.write(`${JSON.stringify({ diagnostics: [{ code: "usage", message: error.message }] }, null, 1)}\n`);
+    if (rest.includes("--json"))
+      io.stdout.write(`${JSON.stringify({ diagnostics: [{ code: "usage", message: error.message }] }, null, 1)}\n`);
     io.stderr.write(`equiform ${command.name}: ${error.message}. See equiform ${command.name} --help.\n`);
     return 2;
   }

@@ -38,14 +38,20 @@ function excerpt(source: string, [start, end]: readonly [number, number]): strin
 /** A report as a person reads it. */
 export function reportText(report: Report, source: string | null): string {
   const lines = [report.summary];
-  if (report.diagnostics.length > 0) lines.push(diagnosticsText(report.diagnostics.map((d) => ({ ...d })) as Diagnostic[], source));
+  if (report.diagnostics.length > 0)
+    lines.push(diagnosticsText(report.diagnostics.map((d) => ({ ...d })) as Diagnostic[], source));
   if (report.amplitude !== undefined) {
-    const range = report.range !== undefined && report.range.length > 1 ? `, n = ${report.range[0]} to ${report.range.at(-1)}` : "";
-    lines.push(`  amplitude ${report.amplitude.key}${range}, target ${report.target}, ${report.terms} ${report.terms === 1 ? "term" : "terms"}, ${report.digest}`);
+    const range =
+      report.range !== undefined && report.range.length > 1 ? `, n = ${report.range[0]} to ${report.range.at(-1)}` : "";
+    lines.push(
+      `  amplitude ${report.amplitude.key}${range}, target ${report.target}, ${report.terms} ${report.terms === 1 ? "term" : "terms"}, ${report.digest}`,
+    );
   }
   for (const c of report.comparisons) {
     const at = c.n === undefined ? "" : ` at n = ${c.n}`;
-    lines.push(`  ${c.agrees ? "agrees with" : "DISAGREES with"} ${c.with}${at}: ${c.points} points, ${c.primes} primes${c.bound === undefined ? "" : `, bound ${c.bound}`}`);
+    lines.push(
+      `  ${c.agrees ? "agrees with" : "DISAGREES with"} ${c.with}${at}: ${c.points} points, ${c.primes} primes${c.bound === undefined ? "" : `, bound ${c.bound}`}`,
+    );
   }
   for (const [code, mark] of Object.entries(report.marks)) {
     if (mark !== undefined && mark.state !== "notApplicable") lines.push(`  ${code}: ${mark.state}. ${mark.evidence}`);

@@ -21,8 +21,10 @@ export const replay: Command = {
     }
     const { certificate, differences } = result.value;
     const { verdict, summary } = certificate.report;
-    if (call.json) printJson(call, { replays: differences.length === 0, verdict, digest: certificate.subject.digest, differences });
-    else if (differences.length === 0) call.io.stdout.write(`Replays: every value, comparison and mark was found again.\n${summary}\n`);
+    if (call.json)
+      printJson(call, { replays: differences.length === 0, verdict, digest: certificate.subject.digest, differences });
+    else if (differences.length === 0)
+      call.io.stdout.write(`Replays: every value, comparison and mark was found again.\n${summary}\n`);
     else
       call.io.stdout.write(
         `Does not replay: ${differences.length} ${differences.length === 1 ? "place differs" : "places differ"}.\n${differences

@@ -34,16 +34,20 @@ async function run(call: Call): Promise<Exit> {
   const random = integerOption(call, "random", 1, mostRandom);
   const fieldName = call.option("field") ?? "rational";
   if ((points === null) === (random === null)) throw new Usage("give either --points FILE or --random N");
-  if (fieldName !== "rational" && fieldName !== "prime") throw new Usage(`--field: expected rational or prime, got ${fieldName}`);
+  if (fieldName !== "rational" && fieldName !== "prime")
+    throw new Usage(`--field: expected rational or prime, got ${fieldName}`);
   const text = await readText(call.positional[0] ?? "-", call.io);
   const entry = text.ok ? readEntry(text.value) : text;
   if (!entry.ok) return fail(call, entry.diagnostics);
   const { amplitude } = entry.value;
   const asked = integerOption(call, "n", 4, 64);
-  if (typeof amplitude.n === "number" && asked !== null && asked !== amplitude.n) throw new Usage(`--n: this form is for n = ${amplitude.n}`);
+  if (typeof amplitude.n === "number" && asked !== null && asked !== amplitude.n)
+    throw new Usage(`--n: this form is for n = ${amplitude.n}`);
   const n = asked ?? (typeof amplitude.n === "number" ? amplitude.n : amplitude.n.from);
   if (typeof amplitude.n !== "number" && (n < amplitude.n.from || (amplitude.n.to !== null && n > amplitude.n.to)))
-    throw new Usage(`--n: this form is for n from ${amplitude.n.from}${amplitude.n.to === null ? "" : ` to ${amplitude.n.to}`}`);
+    throw new Usage(
+      `--n: this form is for n from ${amplitude.n.from}${amplitude.n.to === null ? "" : ` to ${amplitude.n.to}`}`,
+    );
   const form = formAt(entry.value, n);
   const seed = random === null ? null : (call.option("seed") ?? freshSeed());
   const reply =
@@ -54,7 +58,9 @@ async function run(call: Call): Promise<Exit> {
   const result = { ...reply.value, ...(seed === null ? {} : { seed }) };
   if (call.json) printJson(call, result);
   else {
-    call.io.stdout.write(`${result.values.map((v, i) => v ?? `no value: ${result.reasons?.find((r) => r.point === i)?.message}`).join("\n")}\n`);
+    call.io.stdout.write(
+      `${result.values.map((v, i) => v ?? `no value: ${result.reasons?.find((r) => r.point === i)?.message}`).join("\n")}\n`,
+    );
     if (seed !== null && call.option("seed") === null) call.io.stderr.write(`seed ${seed}\n`);
   }
   return 0;
@@ -74,13 +80,17 @@ async function values<T>(
   random: number | null,
   seed: string | null,
 ): Promise<Result<Values>> {
-  const points = file === null ? success(drawn(field, form, random ?? 0, seed ?? "")) : await given(field, form, file, call);
+  const points =
+    file === null ? success(drawn(field, form, random ?? 0, seed ?? "")) : await given(field, form, file, call);
   if (!points.ok) return points;
   const reasons: { point: number; message: string }[] = [];
   const found = points.value.map((point, i) => {
     const evaluation = evaluateForm(field, form, point);
     if (evaluation.kind === "value") return field.toText(evaluation.sum);
-    reasons.push({ point: i, message: `a denominator vanishes at characters ${evaluation.span[0]} to ${evaluation.span[1]} of the notation` });
+    reasons.push({
+      point: i,
+      message: `a denominator vanishes at characters ${evaluation.span[0]} to ${evaluation.span[1]} of the notation`,
+    });
     return null;
   });
   return success({ values: found, ...(reasons.length > 0 ? { reasons } : {}) });
@@ -92,7 +102,12 @@ function drawn<T>(field: Field<T>, form: FormAtN, count: number, seed: string): 
 }
 
 /** Points from a file: rationals, carried over to the field where it is another. */
-async function given<T>(field: Field<T>, form: FormAtN, file: string, call: Call): Promise<Result<readonly Point<T>[]>> {
+async function given<T>(
+  field: Field<T>,
+  form: FormAtN,
+  file: string,
+  call: Call,
+): Promise<Result<readonly Point<T>[]>> {
   const text = await readText(file, call.io);
   if (!text.ok) return text;
   let document: unknown;
@@ -102,7 +117,21 @@ async function given<T>(field: Field<T>, form: FormAtN, file: string, call: Call
     return failure({ code: "points-json", message: `${file} is not JSON.`, help: "Give a points document." });
   }
   const points = readPoints(document, form, pointUse(form));
-  return points.ok ? success(points.value.map((point) => mapPoint(point, (x) => fromRational(field, x)))) : points;
+  if (!points.ok) return points;
+  let outside = false;
+  const carried = points.value.map((point) =>
+    mapPoint(point, (x) => {
+      const image = fromRational(field, x);
+      outside ||= image === null;
+      return image ?? field.zero;
+    }),
+  );
+  if (!outside) return success(carried);
+  return failure({
+    code: "points-field",
+    message: `A coordinate has a denominator that is zero in the ${field.name}.`,
+    help: "Use --field rational.",
+  });
 }
 
 function fail(call: Call, diagnostics: readonly Diagnostic[]): Exit {

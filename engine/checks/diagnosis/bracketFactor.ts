@@ -62,12 +62,18 @@ function* candidates(n: number, loops: number): Generator<Candidate> {
       }
       for (let c = b + 1; c <= n; c++)
         for (let d = c + 1; d <= n; d++)
-          yield { text: `<${a} ${b} ${c} ${d}>`, value: (s) => bracket(s.field, twistor(s, a), twistor(s, b), twistor(s, c), twistor(s, d)) };
+          yield {
+            text: `<${a} ${b} ${c} ${d}>`,
+            value: (s) => bracket(s.field, twistor(s, a), twistor(s, b), twistor(s, c), twistor(s, d)),
+          };
     }
   for (let l = 0; l < loops; l++)
     for (let m = l + 1; m < loops; m++) {
       const words = [l, m].map((i) => "ABCDEFGH".slice(2 * i, 2 * i + 2));
-      yield { text: `<${words.join(" ")}>`, value: (s) => bracket(s.field, ...s.point.lines[l]!, ...s.point.lines[m]!) };
+      yield {
+        text: `<${words.join(" ")}>`,
+        value: (s) => bracket(s.field, ...s.point.lines[l]!, ...s.point.lines[m]!),
+      };
     }
 }
 

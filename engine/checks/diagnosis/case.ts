@@ -41,7 +41,9 @@ export function drawProbes(seed: string, form: FormAtN, truth: Comparand): reado
   return samples
     .flatMap((sample, i) => {
       const [value, expected] = [values[i], truths[i]];
-      return value?.kind === "value" && expected !== null && expected !== undefined ? [{ sample, value, truth: expected }] : [];
+      return value?.kind === "value" && expected !== null && expected !== undefined
+        ? [{ sample, value, truth: expected }]
+        : [];
     })
     .slice(0, probeCount);
 }

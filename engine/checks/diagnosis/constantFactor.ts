@@ -32,7 +32,8 @@ export function constantFactor({ seed, form, truths, probes, spend }: DiagnosisC
     const fraction = reconstructFraction(residue, modulus);
     const text = fraction === null ? null : fractionText(fraction);
     // A fraction that two more primes confirm is the factor: a wrong one would pass with probability 2^-60.
-    if (text !== null && text === known && residues.length >= 3) return [{ code: "constant-factor", factor: text, message: sentence(text, form.loops) }];
+    if (text !== null && text === known && residues.length >= 3)
+      return [{ code: "constant-factor", factor: text, message: sentence(text, form.loops) }];
     known = text;
   }
   return [];
@@ -41,7 +42,9 @@ export function constantFactor({ seed, form, truths, probes, spend }: DiagnosisC
 function sentence(factor: string, loops: number): string {
   if (factor === "-1") return "The form is -1 times the truth: its overall sign is wrong.";
   const symmetrised = loops > 1 && factor === String(factorial(loops));
-  const because = symmetrised ? ` This is ${loops}!, the number of orders of the loop lines: the sum over them was taken once too often.` : "";
+  const because = symmetrised
+    ? ` This is ${loops}!, the number of orders of the loop lines: the sum over them was taken once too often.`
+    : "";
   return `The form is ${factor} times the truth.${because}`;
 }
 

@@ -21,7 +21,7 @@ interface DiagnosisCheck {
 
 const diagnoses: readonly DiagnosisCheck[] = [
   { run: weight, final: false },
-  { run: otherConvention, final: true },
+  { run: otherConvention, final: false },
   { run: constantFactor, final: true },
   { run: bracketFactor, final: true },
   { run: otherTarget, final: true },

@@ -19,7 +19,9 @@ export function otherAmplitude(c: DiagnosisCase): readonly Diagnosis[] {
     if (!matches(c, question, drop)) continue;
     const key = sizeKey(question);
     const legs = drop.length === 0 ? "" : ` of the legs without ${drop.join(" and ")}`;
-    return [{ code: "other-amplitude", key, message: `The form is the amplitude ${key}${legs}, not ${sizeKey(form)}.` }];
+    return [
+      { code: "other-amplitude", key, message: `The form is the amplitude ${key}${legs}, not ${sizeKey(form)}.` },
+    ];
   }
   return [];
 }
@@ -40,5 +42,10 @@ function matches({ form, seed, truthOf, spend }: DiagnosisCase, question: Questi
 function withLegs(point: Sample["point"], legs: readonly number[]): Sample["point"] {
   if (legs.length === point.n) return point;
   const first = relabelPoint(point, [...legs, ...Array.from({ length: point.n - legs.length }, () => 1)]);
-  return { ...first, n: legs.length, twistors: first.twistors.slice(0, legs.length), chi: first.chi.slice(0, legs.length) };
+  return {
+    ...first,
+    n: legs.length,
+    twistors: first.twistors.slice(0, legs.length),
+    chi: first.chi.slice(0, legs.length),
+  };
 }

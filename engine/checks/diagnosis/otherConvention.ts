@@ -9,8 +9,15 @@ export function otherConvention({ form, probes }: DiagnosisCase): readonly Diagn
   if (probes.length === 0 || !(kinds.has("square") || kinds.has("string"))) return [];
   const flipped = prepare({ ...form, squareSign: form.squareSign === 1 ? -1 : 1 });
   const outcomes = flipped.evaluate(probes.map((p) => p.sample));
-  if (!allEqual(outcomes, probes.map((p) => p.truth))) return [];
-  const [mine, other] = form.squareSign === 1 ? ["s_ab = <a b>[a b]", '"<ab>[ba]"'] : ["s_ab = <a b>[b a]", '"<ab>[ab]"'];
+  if (
+    !allEqual(
+      outcomes,
+      probes.map((p) => p.truth),
+    )
+  )
+    return [];
+  const [mine, other] =
+    form.squareSign === 1 ? ["s_ab = <a b>[a b]", '"<ab>[ba]"'] : ["s_ab = <a b>[b a]", '"<ab>[ab]"'];
   return [
     {
       code: "other-convention",

@@ -1,6 +1,7 @@
 /** The form is right, but for another target of the same amplitude. */
-import { targetSchema } from "../report";
+
 import type { Diagnosis, Target } from "../report";
+import { targetSchema } from "../report";
 import { allEqual, type DiagnosisCase } from "./case";
 
 const names: Readonly<Record<Target, string>> = {
@@ -20,6 +21,8 @@ export function otherTarget({ question, bench, probes, truthOf }: DiagnosisCase)
     const expected = truth.evaluate(samples);
     if (expected.some((v) => v === null)) return [];
     const right = allEqual(bench.prepared.evaluate(samples), expected as number[]);
-    return right ? [{ code: "other-target", target, message: `The form is ${names[target]}: set the target to "${target}".` }] : [];
+    return right
+      ? [{ code: "other-target", target, message: `The form is ${names[target]}: set the target to "${target}".` }]
+      : [];
   });
 }

@@ -8,7 +8,8 @@ export function referenceDependent({ bench }: DiagnosisCase): readonly Diagnosis
   return [
     {
       code: "reference-dependent",
-      message: "The value depends on the reference: a term is missing, or one has a wrong sign or label. The sum over all terms must not depend on it.",
+      message:
+        "The value depends on the reference: a term is missing, or one has a wrong sign or label. The sum over all terms must not depend on it.",
     },
   ];
 }

@@ -29,12 +29,20 @@ export function relabelled({ form, probes, spend }: DiagnosisCase): readonly Dia
   for (const reflected of form.negativeLegs === null ? [] : [false, true]) {
     for (let shift = 0; shift < n; shift++) {
       if (shift === 0 && !reflected) continue;
-      const labels = legs.map((a) => ((((reflected ? -a : a) + shift - 1) % n) + n) % n + 1);
+      const labels = legs.map((a) => (((((reflected ? -a : a) + shift - 1) % n) + n) % n) + 1);
       const sign = signOf(labels);
       if (sign === null) continue;
       const turned = reflected ? `reversed (leg i is leg ${shift}-i)` : `moved by ${shift} (leg i is leg i+${shift})`;
       const factor = sign === -1 ? ", times -1" : "";
-      return [{ code: "relabelled", shift, reflected, ...(sign === -1 ? { factor: "-1" } : {}), message: `The form is right with its legs ${turned}${factor}.` }];
+      return [
+        {
+          code: "relabelled",
+          shift,
+          reflected,
+          ...(sign === -1 ? { factor: "-1" } : {}),
+          message: `The form is right with its legs ${turned}${factor}.`,
+        },
+      ];
     }
   }
   if (n > mostLegsForPermutations || form.negativeLegs !== null) return [];
@@ -43,7 +51,14 @@ export function relabelled({ form, probes, spend }: DiagnosisCase): readonly Dia
     if (sign === null) continue;
     const factor = sign === -1 ? ", times -1" : "";
     const moved = legs.filter((a) => permutation[a - 1] !== a).map((a) => `${a} -> ${permutation[a - 1]}`);
-    return [{ code: "relabelled", permutation: [...permutation], ...(sign === -1 ? { factor: "-1" } : {}), message: `The form is right with its legs exchanged: ${moved.join(", ")}${factor}.` }];
+    return [
+      {
+        code: "relabelled",
+        permutation: [...permutation],
+        ...(sign === -1 ? { factor: "-1" } : {}),
+        message: `The form is right with its legs exchanged: ${moved.join(", ")}${factor}.`,
+      },
+    ];
   }
   return [];
 }

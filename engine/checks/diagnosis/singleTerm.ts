@@ -18,7 +18,9 @@ export function singleTerm(c: DiagnosisCase): readonly Diagnosis[] {
     if (inverse === null) continue;
     // form + x term = truth
     const x = field.multiply(field.subtract(first.truth, first.value.sum), inverse);
-    const everywhere = rest.every(({ value, truth }) => field.add(value.sum, field.multiply(x, value.terms[index] ?? 0)) === truth);
+    const everywhere = rest.every(
+      ({ value, truth }) => field.add(value.sum, field.multiply(x, value.terms[index] ?? 0)) === truth,
+    );
     if (!everywhere) continue;
     const change = reconstructFraction(BigInt(x), BigInt(prime));
     if (change === null || !confirmed(c, index, change)) continue;
@@ -29,13 +31,24 @@ export function singleTerm(c: DiagnosisCase): readonly Diagnosis[] {
 
 function repair(index: number, numerator: bigint, denominator: bigint): Diagnosis {
   const term = `term ${index + 1}`;
-  if (numerator === -denominator) return { code: "terms", remove: [index], message: `The form is right without ${term}.` };
-  if (numerator === -2n * denominator) return { code: "terms", negate: [index], message: `The form is right when the sign of ${term} is changed.` };
+  if (numerator === -denominator)
+    return { code: "terms", remove: [index], message: `The form is right without ${term}.` };
+  if (numerator === -2n * denominator)
+    return { code: "terms", negate: [index], message: `The form is right when the sign of ${term} is changed.` };
   const factor = fractionText({ numerator: numerator + denominator, denominator });
-  return { code: "terms", rescale: [index], factor, message: `The form is right when ${term} is multiplied by ${factor}.` };
+  return {
+    code: "terms",
+    rescale: [index],
+    factor,
+    message: `The form is right when ${term} is multiplied by ${factor}.`,
+  };
 }
 
-function confirmed({ seed, form, truths, spend }: DiagnosisCase, index: number, change: { numerator: bigint; denominator: bigint }): boolean {
+function confirmed(
+  { seed, form, truths, spend }: DiagnosisCase,
+  index: number,
+  change: { numerator: bigint; denominator: bigint },
+): boolean {
   const [truth] = truths;
   if (truth === undefined) return false;
   const prepared = prepare(form);

@@ -2,16 +2,19 @@
 import { rotatePoint } from "../../kinematics";
 import type { Bench } from "../bench";
 import type { Mark } from "../report";
-import { testInvariance, termsPermuted } from "./invariance";
+import { termsPermuted, testInvariance } from "./invariance";
 
 export function cyclic(bench: Bench): Mark {
   const { n, negativeLegs } = bench.form;
   const step = smallestRotation(n, negativeLegs);
-  if (step === n) return { state: "notApplicable", evidence: "No rotation of the legs leaves the helicities as they are." };
+  if (step === n)
+    return { state: "notApplicable", evidence: "No rotation of the legs leaves the helicities as they are." };
   const when = step === 1 ? "every leg a becomes leg a+1" : `every leg a becomes leg a+${step}`;
   const mark = testInvariance(bench, { when, move: ({ point }) => rotatePoint(point, step) });
   if (mark.state !== "holds") return mark;
-  const divisors = Array.from({ length: n - 1 }, (_, i) => i + 1).filter((shift) => n % shift === 0 && shift % step === 0);
+  const divisors = Array.from({ length: n - 1 }, (_, i) => i + 1).filter(
+    (shift) => n % shift === 0 && shift % step === 0,
+  );
   const manifestBy = divisors.find((shift) => termsPermuted(bench, ({ point }) => rotatePoint(point, shift)));
   const manifest = manifestBy === step;
   return {

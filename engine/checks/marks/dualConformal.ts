@@ -10,13 +10,24 @@ const withInfinityTwistor = ["angle", "square", "string", "mandelstam", "distanc
 
 export function dualConformal(bench: Bench): Mark {
   if (bench.form.negativeLegs !== null)
-    return { state: "notApplicable", evidence: "A component is not invariant by itself: it holds the MHV denominator." };
+    return {
+      state: "notApplicable",
+      evidence: "A component is not invariant by itself: it holds the MHV denominator.",
+    };
   const mark = testInvariance(bench, {
     when: "all twistors, loop points and references are moved by one matrix of determinant 1",
     move: ({ prime, field, point }) => {
       const random = randomness(`${bench.seed}|matrix|${prime}`);
-      const lowered = transformPoint(field, point, triangular(field, random, (row, column) => row > column));
-      return transformPoint(field, lowered, triangular(field, random, (row, column) => row < column));
+      const lowered = transformPoint(
+        field,
+        point,
+        triangular(field, random, (row, column) => row > column),
+      );
+      return transformPoint(
+        field,
+        lowered,
+        triangular(field, random, (row, column) => row < column),
+      );
     },
   });
   if (mark.state !== "holds") return mark;
@@ -30,7 +41,11 @@ export function dualConformal(bench: Bench): Mark {
 }
 
 /** A random 4 x 4 matrix with ones on the diagonal and random entries on one side of it: its determinant is 1. */
-function triangular(field: Field<number>, random: Randomness, side: (row: number, column: number) => boolean): number[][] {
+function triangular(
+  field: Field<number>,
+  random: Randomness,
+  side: (row: number, column: number) => boolean,
+): number[][] {
   const indices = [0, 1, 2, 3];
   return indices.map((row) =>
     indices.map((column) => {

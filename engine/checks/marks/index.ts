@@ -19,10 +19,25 @@ export interface MarkCheck {
 
 export const markChecks: readonly MarkCheck[] = [
   { code: "cyclic", says: "is unchanged when the legs are rotated", constraint: true, run: cyclic },
-  { code: "reflection", says: "is unchanged when the order of the legs is reversed", constraint: true, run: reflection },
+  {
+    code: "reflection",
+    says: "is unchanged when the order of the legs is reversed",
+    constraint: true,
+    run: reflection,
+  },
   { code: "loopExchange", says: "is symmetric in the loop lines", constraint: true, run: loopExchange },
-  { code: "referenceIndependent", says: "does not depend on its references", constraint: true, run: referenceIndependent },
-  { code: "lineIndependent", says: "depends on the loop lines only, not on the points that span them", constraint: true, run: lineIndependent },
+  {
+    code: "referenceIndependent",
+    says: "does not depend on its references",
+    constraint: true,
+    run: referenceIndependent,
+  },
+  {
+    code: "lineIndependent",
+    says: "depends on the loop lines only, not on the points that span them",
+    constraint: true,
+    run: lineIndependent,
+  },
   { code: "dualConformal", says: "is dual conformally invariant", constraint: true, run: dualConformal },
   { code: "localPoles", says: "has only physical poles in its denominators", constraint: false, run: localPoles },
 ];

@@ -19,9 +19,13 @@ export function testInvariance(bench: Bench, { when, move, factor }: Invariance)
     const expected = factor === undefined ? at.sum : sample.field.multiply(at.sum, factor(sample));
     return moved.sum !== expected;
   });
-  if (compared.length === 0) return { state: "untested", evidence: `Every sample became a point with a vanishing denominator when ${when}.` };
+  if (compared.length === 0)
+    return { state: "untested", evidence: `Every sample became a point with a vanishing denominator when ${when}.` };
   if (unequal.length > 0)
-    return { state: "fails", evidence: `The value changes when ${when}: at ${unequal.length} of ${compared.length} samples.` };
+    return {
+      state: "fails",
+      evidence: `The value changes when ${when}: at ${unequal.length} of ${compared.length} samples.`,
+    };
   const bound = boundText(bench.miss, compared.length);
   return {
     state: "holds",

@@ -12,7 +12,14 @@ export function lineIndependent(bench: Bench): Mark {
   const mixing = (sample: Sample) => {
     const random = randomness(`${bench.seed}|line points|${sample.prime}`);
     const draw = () => Number(random.below(BigInt(sample.prime)));
-    return Array.from({ length: loops }, () => [[draw(), draw()], [draw(), draw()]] as const);
+    return Array.from(
+      { length: loops },
+      () =>
+        [
+          [draw(), draw()],
+          [draw(), draw()],
+        ] as const,
+    );
   };
   return testInvariance(bench, {
     when: "other points are taken on the loop lines, up to the weight -4 of each line",

@@ -8,7 +8,8 @@ import { testInvariance } from "./invariance";
 
 export function referenceIndependent(bench: Bench): Mark {
   const { referenceTwistor, referenceLine } = pointUse(bench.form);
-  if (!referenceTwistor && !referenceLine) return { state: "notApplicable", evidence: "The form holds no reference twistor and no reference line." };
+  if (!referenceTwistor && !referenceLine)
+    return { state: "notApplicable", evidence: "The form holds no reference twistor and no reference line." };
   return testInvariance(bench, {
     when: "the reference twistor and the reference line are drawn again",
     move: ({ prime, field, point }) =>

@@ -2,13 +2,14 @@
 import { reflectPoint, rotatePoint } from "../../kinematics";
 import type { Bench } from "../bench";
 import type { Mark } from "../report";
-import { testInvariance, termsPermuted } from "./invariance";
+import { termsPermuted, testInvariance } from "./invariance";
 
 export function reflection(bench: Bench): Mark {
   const { n, negativeLegs } = bench.form;
   const axes = reflections(n, negativeLegs);
   const [axis] = axes;
-  if (axis === undefined) return { state: "notApplicable", evidence: "No reflection of the legs leaves the helicities as they are." };
+  if (axis === undefined)
+    return { state: "notApplicable", evidence: "No reflection of the legs leaves the helicities as they are." };
   const sign = negativeLegs !== null && n % 2 === 1 ? -1 : 1;
   const mark = testInvariance(bench, {
     when: `the order of the legs is reversed${sign === -1 ? ", up to the sign (-1)^n" : ""}`,
@@ -16,7 +17,9 @@ export function reflection(bench: Bench): Mark {
     ...(sign === -1 ? { factor: ({ field }) => field.negate(field.one) } : {}),
   });
   if (mark.state !== "holds") return mark;
-  const manifest = axes.some((shift) => termsPermuted(bench, ({ point }) => rotatePoint(reflectPoint(point), shift), sign));
+  const manifest = axes.some((shift) =>
+    termsPermuted(bench, ({ point }) => rotatePoint(reflectPoint(point), shift), sign),
+  );
   const sentence = manifest
     ? "It is manifest: a reflection maps the terms to each other."
     : "It is not manifest: no reflection maps the terms to each other.";

@@ -2,7 +2,12 @@ import { describe, expect, it } from "vitest";
 import { boundText, certaintyBits, missProbability, primesOf31Bits, samplesNeeded } from "../../../engine/checks/bound";
 import { pari } from "../../support/pari";
 
-const size = (degree: number, heightBits: number) => ({ degree, denominatorDegree: degree, heightBits, denominatorHeightBits: heightBits });
+const size = (degree: number, heightBits: number) => ({
+  degree,
+  denominatorDegree: degree,
+  heightBits,
+  denominatorHeightBits: heightBits,
+});
 
 describe("the bound of an agreement", () => {
   it("counts the primes between 2^30 and 2^31 as PARI/GP's primepi does", () => {

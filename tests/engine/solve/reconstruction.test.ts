@@ -16,7 +16,9 @@ describe("rational reconstruction", () => {
       [10n ** 18n + 9n, 10n ** 17n + 3n],
     ] as const;
     const modulus = primes.reduce((m, p) => m * p, 1n);
-    const program = cases.map(([a, b]) => `r = lift(Mod(${a}/${b}, ${modulus})); print(r, " ", bestappr(Mod(r, ${modulus})))`).join("\n");
+    const program = cases
+      .map(([a, b]) => `r = lift(Mod(${a}/${b}, ${modulus})); print(r, " ", bestappr(Mod(r, ${modulus})))`)
+      .join("\n");
     const lines = pari(program).split("\n");
     expect(lines).toHaveLength(cases.length);
     for (const line of lines) {
