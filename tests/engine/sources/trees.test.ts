@@ -86,7 +86,7 @@ describe("R-invariants", () => {
   const without = (left: number): Invariant => [0, 1, 2, 3, 4, 5].filter((x) => x !== left) as unknown as Invariant;
   const all = [0, 1, 2, 3, 4, 5].map(without);
 
-  // [1 2 3 4 5] - [2 3 4 5 6] + [3 4 5 6 1] - ... = 0 (0905.1473); in ascending order the six alternate in sign.
+  // [1 2 3 4 5] - [2 3 4 5 6] + [3 4 5 6 1] - ... = 0 (0807.1095); in ascending order the six alternate in sign.
   it("obey the six-term identity, and no other choice of signs", () => {
     expect(sumOf(all, [1, -1, 1, -1, 1, -1], 5)).toBe(0);
     for (let flipped = 0; flipped < 6; flipped++) {
