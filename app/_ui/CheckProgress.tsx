@@ -47,8 +47,8 @@ export function CheckProgress({ check }: { check: Pick<CheckView, "id" | "state"
   return (
     <div className={styles.progress}>
       <p aria-live="polite">{stageSentence(now.state, now.progress.stage)}</p>
-      <progress aria-label="Progress of this stage" max={Math.max(total, 1)} value={Math.min(done, total)} />
-      <p className={styles.count}>{total > 0 ? `${done} of ${total} steps of this stage` : "\u00a0"}</p>
+      <progress aria-label="Progress of the check" max={Math.max(total, 1)} value={Math.min(done, total)} />
+      <p className={styles.count}>{total > 0 ? `${done} of ${total} steps` : "\u00a0"}</p>
       <p className={styles.count} role="status">
         {lost ? "The connection is lost; trying again. The check goes on without this page." : "\u00a0"}
       </p>

@@ -140,3 +140,8 @@ const shortWords = {
   loopExchange: "loop exchange",
   parity: "parity",
 };
+
+/** Names of the marks by code, small letters, for a sentence. */
+export const markNames: ReadonlyMap<string, string> = new Map(
+  readingOrder.map((code) => [code, marks[code].name.charAt(0).toLowerCase() + marks[code].name.slice(1)]),
+);
