@@ -38,7 +38,19 @@ interface Inventory {
   readonly loopsElsewhere: boolean;
 }
 
+/** A formula never changes, and is asked for at every point. */
+const inventories = new WeakMap<Formula, Inventory>();
+
 function inventory(formula: Formula): Inventory {
+  const known = inventories.get(formula);
+  if (known !== undefined) return known;
+  const made = takeInventory(formula);
+  inventories.set(formula, made);
+  return made;
+}
+
+function takeInventory(formula: Formula): Inventory {
+  const definitions = new Map(formula.definitions.map((definition) => [definition.name, definition.value]));
   const kinds = new Set<string>();
   const names = new Set<string>();
   const waiting: { node: unknown; inDistance: boolean }[] = [{ node: formula.expression, inDistance: false }];
@@ -55,8 +67,7 @@ function inventory(formula: Formula): Inventory {
       }
       if ((kind === "call" || kind === "named") && typeof name === "string" && !names.has(name)) {
         names.add(name);
-        const definition = formula.definitions.find((candidate) => candidate.name === name);
-        waiting.push({ node: definition?.value, inDistance: false });
+        waiting.push({ node: definitions.get(name), inDistance: false });
       }
     }
     const inner = inDistance || kind === "distance";

@@ -48,6 +48,7 @@ const MOST_CACHED_IDS = 8192;
 export class NumericAlgebra<T> implements Algebra<Value<T>, Supertwistor<T>, Line<T>> {
   readonly values: ValueAlgebra<T>;
   private readonly brackets = new Map<number, T>();
+  private readonly fiveBrackets = new Map<string, Value<T>>();
   private readonly tildes = new Map<number, Spinor<T>>();
 
   constructor(
@@ -126,11 +127,16 @@ export class NumericAlgebra<T> implements Algebra<Value<T>, Supertwistor<T>, Lin
   }
 
   fiveBracket(points: readonly PointPiece<Supertwistor<T>>[]): Value<T> {
+    const key = points.map((piece) => piece.id).join();
+    const known = this.fiveBrackets.get(key);
+    if (known !== undefined) return known;
     const coefficients = this.fourBrackets(points);
     const denominator = coefficients.reduce((product, x) => this.field.multiply(product, x), this.field.one);
     const inverse = this.field.inverse(denominator);
     if (inverse === null) throw new ZeroDenominator();
-    return this.deltaWith(inverse, coefficients, points);
+    const value = this.deltaWith(inverse, coefficients, points);
+    this.fiveBrackets.set(key, value);
+    return value;
   }
 
   delta(points: readonly PointPiece<Supertwistor<T>>[]): Value<T> {

@@ -37,6 +37,7 @@ const lineBracket = (l: Bound, m: Bound): Bound => terms(6, product(l, m));
 export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
   readonly factors = new Factors();
   private readonly shortKeys = new Map<string, string>();
+  private readonly fiveBrackets = new Map<string, Quotient>();
 
   constructor(private readonly n: number) {}
 
@@ -107,8 +108,13 @@ export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
   }
 
   fiveBracket(points: readonly PointPiece<PointSize>[]): Quotient {
+    const key = keys(points);
+    const known = this.fiveBrackets.get(key);
+    if (known !== undefined) return known;
     const denominator = points.map((_, i) => this.fourBracket(points.filter((_, j) => j !== i)));
-    return this.divide(this.delta(points), this.multiply(denominator));
+    const value = this.divide(this.delta(points), this.multiply(denominator));
+    this.fiveBrackets.set(key, value);
+    return value;
   }
 
   /** Four rows, one a flavour, each of five products <bcde> chi_a; the determinants' own terms are counted in `sizeBound`. */
