@@ -21,7 +21,7 @@ export interface Bench {
   readonly miss: number;
 }
 
-export const valueOf = (outcome: Outcome): Value | null => (outcome.kind === "value" ? outcome : null);
+export const asValue = (outcome: Outcome): Value | null => (outcome.kind === "value" ? outcome : null);
 
 /** Values at moved samples beside those at the samples themselves, bad points left out. */
 export function pairs(
@@ -30,7 +30,7 @@ export function pairs(
 ): readonly { readonly sample: Sample; readonly at: Value; readonly moved: Value }[] {
   const outcomes = bench.prepared.evaluate(bench.samples.map((sample) => ({ ...sample, point: move(sample) })));
   return outcomes.flatMap((outcome, i) => {
-    const [sample, at, moved] = [bench.samples[i], bench.values[i], valueOf(outcome)];
+    const [sample, at, moved] = [bench.samples[i], bench.values[i], asValue(outcome)];
     return sample && at && moved ? [{ sample, at, moved }] : [];
   });
 }

@@ -14,7 +14,7 @@ import { findPoles } from "./poles";
 import type { Comparison, Diagnosis, Mark, MarkCode, Pole, Target } from "./report";
 import { drawSamples, type Sampled } from "./sampling";
 import { type Comparand, fromForm, fromSource } from "./truth";
-import { checkWeights, type WeightReport } from "./weights";
+import { checkWeights } from "./weights";
 
 /** What was found at one n. */
 export interface SizeResult {
