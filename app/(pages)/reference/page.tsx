@@ -1,6 +1,7 @@
 import type { Metadata } from "next";
-import { codes } from "../../../engine/notation/codes";
+import { Latex } from "../../_ui/Formula";
 import {
+  codes,
   deepestNesting,
   fewestLegs,
   largestExponent,
@@ -9,8 +10,7 @@ import {
   mostLoops,
   mostSourceUnits,
   mostTerms,
-} from "../../../engine/notation/limits";
-import { Latex } from "../../_ui/Formula";
+} from "../../_ui/notationFacts";
 import { Lead, Opening, Page, Section } from "../../_ui/Page";
 import { SourceText } from "../../_ui/SourceText";
 import { TableBox } from "../../_ui/TableBox";

@@ -1,8 +1,8 @@
 /** Made-up data that put each part of the pages into each of its states; nothing here is a result. */
 
-import type { Report } from "../../../engine/checks/report";
-import type { Diagnostic } from "../../../engine/result";
-import type { Triangle } from "../../_contract";
+import type { CheckView, Triangle } from "../../_contract";
+
+type Report = NonNullable<CheckView["report"]>;
 
 export const rows: Triangle["rows"] = Array.from({ length: 5 }, (_, row) => ({
   n: row + 4,
@@ -57,7 +57,7 @@ export const accepted: Report = {
 
 export const faulty = "[1 2 3 4 5] + <AB12>\n+ [1 2 3 4 n+q] / (1 2";
 
-export const faults: readonly Diagnostic[] = [
+export const faults: Report["diagnostics"] = [
   {
     code: "run-together",
     span: [14, 20],

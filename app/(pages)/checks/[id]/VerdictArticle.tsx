@@ -1,10 +1,11 @@
-import type { Report } from "../../../../engine/checks/report";
 import type { CheckView } from "../../../_contract";
 import { ComparisonTable } from "../../../_ui/ComparisonTable";
 import { Diagnosis } from "../../../_ui/Diagnosis";
 import { Marks } from "../../../_ui/MarkSentence";
 import { Lead, Opening, Page, Section } from "../../../_ui/Page";
 import { SourceText } from "../../../_ui/SourceText";
+
+type Report = NonNullable<CheckView["report"]>;
 
 const titles: Record<Report["verdict"], string> = {
   agrees: "It is right",
