@@ -136,8 +136,9 @@ function faults(request: DeriveRequest): Diagnostic[] {
   }
   if (found.length === 0 && request.method === "recursion") {
     const terms = countRecursionTerms(n, k, loops as 0 | 1);
-    if (terms > BigInt(mostDerivedTerms)) {
-      const message = `The recursion writes ${terms} terms here; the limit is ${mostDerivedTerms}.`;
+    if (terms > mostDerivedTerms) {
+      const number = Number.isFinite(terms) ? String(terms) : "more than 2^53";
+      const message = `The recursion writes ${number} terms here; the limit is ${mostDerivedTerms}.`;
       found.push(fault("derive-too-many-terms", message, "Ask for fewer legs, or for a k further from the middle."));
     }
   }

@@ -108,28 +108,37 @@ export class Recursion {
   }
 }
 
-/** An upper bound of the number of terms, which is exact for trees (Narayana numbers); found without writing any. */
-export function countRecursionTerms(n: number, k: number, loops: 0 | 1): bigint {
-  const done = new Map<string, bigint>();
-  const count = (legs: number, order: number, loop: number): bigint => {
-    if (!exists(legs, order, loop)) return 0n;
-    if (order === 0 && loop === 0) return 1n;
-    const key = `${legs} ${order} ${loop}`;
+/**
+ * An upper bound of the number of terms, which is exact for trees (Narayana numbers), found without writing any; Infinity where
+ * it is beyond 2^53.
+ */
+export function countRecursionTerms(n: number, k: number, loops: 0 | 1): number {
+  const done = new Map<number, number>();
+  const count = (legs: number, order: number, loop: number): number => {
+    if (!exists(legs, order, loop)) return 0;
+    if (order === 0 && loop === 0) return 1;
+    const key = (legs * (n + 3) + order) * 2 + loop;
     const known = done.get(key);
     if (known !== undefined) return known;
     let total = count(legs - 1, order, loop);
-    for (let j = 2; j <= legs - 3; j++) {
-      for (let kRight = 0; kRight < order; kRight++) {
+    // Either factor may be 0 and the other beyond all bounds, which is no term.
+    const addPairs = (right: number, left: () => number) => {
+      const leftCount = right > 0 ? left() : 0;
+      if (leftCount > 0) total += right * leftCount;
+    };
+    for (let j = 2; j <= legs - 3 && total <= Number.MAX_SAFE_INTEGER; j++) {
+      for (let kRight = 0; kRight < order && kRight <= Math.max(0, j - 3); kRight++) {
         for (let onRight = 0; onRight <= loop; onRight++) {
-          total += count(j + 1, kRight, onRight) * count(legs - j + 1, order - 1 - kRight, loop - onRight);
+          addPairs(count(j + 1, kRight, onRight), () => count(legs - j + 1, order - 1 - kRight, loop - onRight));
         }
       }
     }
-    for (let j = 2; loop === 1 && j <= legs - 2; j++) {
-      for (let kRight = 0; kRight <= order; kRight++) {
-        total += count(j + 1, kRight, 0) * count(legs - j + 3, order - kRight, 0);
+    for (let j = 2; loop === 1 && j <= legs - 2 && total <= Number.MAX_SAFE_INTEGER; j++) {
+      for (let kRight = 0; kRight <= order && kRight <= Math.max(0, j - 3); kRight++) {
+        addPairs(count(j + 1, kRight, 0), () => count(legs - j + 3, order - kRight, 0));
       }
     }
+    if (total > Number.MAX_SAFE_INTEGER) total = Number.POSITIVE_INFINITY;
     done.set(key, total);
     return total;
   };
