@@ -53,7 +53,7 @@ export class Lowering {
   private readonly invariants = new TupleTable();
   private readonly invariantValues: Element[] = [];
   private readonly largeArguments = new Map<bigint, number>();
-  private readonly buffer = new Int32Array(64);
+  private readonly buffer = new Int32Array(6);
   /** <AB>^-4 for each loop line of a form in dual points, else null. */
   private readonly measure: Element | null;
 
@@ -286,14 +286,10 @@ export class Lowering {
   private use(name: string, values: readonly IndexExpression[], place: Place): { place: Place; id: number } {
     const definition = this.definitions.get(name)!;
     const at = definitionPlace(definition, values, place, this.form.n);
-    let length = 0;
-    this.buffer[length++] = this.numbers.get(name)!;
-    this.buffer[length++] = place.shift;
-    this.buffer[length++] = place.permutation.reduce((code, line) => code * 4 + line, 1);
-    const key = definition.parameters.length + length > this.buffer.length ? new Int32Array(256) : this.buffer;
-    key.set(this.buffer.subarray(0, length));
-    for (const parameter of definition.parameters) key[length++] = this.argumentCode(at.bindings.get(parameter)!);
-    return { place: at, id: this.uses.intern(key, length) };
+    const lines = place.permutation.reduce<number>((code, line) => code * 4 + line, 1);
+    const key = [this.numbers.get(name)!, place.shift, lines];
+    for (const parameter of definition.parameters) key.push(this.argumentCode(at.bindings.get(parameter)!));
+    return { place: at, id: this.uses.intern(key, key.length) };
   }
 
   private argumentCode(value: bigint): number {
