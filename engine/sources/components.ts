@@ -8,7 +8,7 @@ import { planFor, treeInReach } from "./recursion";
 import { type SuperPoint, sumPlan } from "./runPlan";
 import type { Question, Source } from "./source";
 import { anglesOf, contractSpinors, cyclicProduct } from "./spinors";
-import { vertexPlan } from "./vertex";
+import { diagramsInReach, vertexPlanFor } from "./vertex";
 
 /**
  * The legs with the Grassmann parts that pick out a gluon component: unit vectors of F^(k+2) as etatilde of the negative
@@ -78,17 +78,17 @@ export const recursionComponents: Source = {
   },
 };
 
-/** Gluon components of NMHV trees by the vertex expansion; the reference twistor has Grassmann part zero. */
+/** Gluon components of trees with k >= 1 by the vertex expansion; the reference twistor has Grassmann part zero. */
 export const vertexComponents: Source = {
   name: "vertex expansion, component",
   reference: "arXiv:1009.1854 MHV Diagrams in Momentum Twistor Space",
   lineage: "vertex expansion",
-  covers: (question) => asksComponent(question) && question.k === 1,
-  cost: (question) => planCost(vertexPlan(question.n), componentGrading(1)) + 40 * question.n,
-  size: (question) => componentSize(vertexPlan(question.n), question),
+  covers: (question) => asksComponent(question) && diagramsInReach(question),
+  cost: (question) => planCost(vertexPlanFor(question), componentGrading(question.k)) + 40 * question.n,
+  size: (question) => componentSize(vertexPlanFor(question), question),
   evaluate(question: Question, point: Point<number>, prime: number): number | null {
     assertCovered(this.name, this.covers(question), question);
-    const reference = { twistor: point.referenceTwistor, chi: [[0, 0, 0]] };
-    return evaluateComponent(vertexPlan(question.n), question, point, prime, [reference]);
+    const reference = { twistor: point.referenceTwistor, chi: [new Array<number>(question.k + 2).fill(0)] };
+    return evaluateComponent(vertexPlanFor(question), question, point, prime, [reference]);
   },
 };

@@ -1,36 +1,40 @@
 import type { Point } from "../kinematics/point";
 import { Modulus } from "./arithmetic";
 import { sizeOf } from "./bound";
-import { type Plan, PlanBuilder, type Term } from "./plan";
+import { remembering } from "./plan";
 import { planBound, planCost, superGrading } from "./planBound";
-import { asksSuperamplitude, assertCovered, legsOf } from "./question";
+import { asksSuperamplitude, assertCovered, inRange, legsOf } from "./question";
 import { sumPlan } from "./runPlan";
 import type { Question, Source } from "./source";
+import { diagramCount, vertexPlan } from "./vertexPlan";
 
-/** The sum over non-adjacent i < j of [* i i+1 j j+1]; base point n is the reference. */
-export function vertexPlan(n: number): Plan {
-  const builder = new PlanBuilder(n + 1);
-  const terms: Term[] = [];
-  for (let i = 0; i < n; i++) {
-    for (let j = i + 2; j < n; j++) {
-      if ((j + 1) % n !== i) terms.push(builder.invariant(n, i, i + 1, j, (j + 1) % n));
-    }
-  }
-  return builder.finish(terms);
-}
+/** Above this many diagrams other sources are far cheaper; (10, k) for k <= 4 is below. */
+const mostDiagrams = 6_000;
 
-/** NMHV trees for every n by the expansion in MHV vertices, with the point's reference twistor and its Grassmann part. */
+const plans = remembering(8, (key) => {
+  const [n, k] = key.split(",").map(Number) as [number, number];
+  return vertexPlan(n, k);
+});
+
+/** The plan of the expansion, shared by all points. */
+export const vertexPlanFor = ({ n, k }: Question) => plans(`${n},${k}`);
+
+/** k = 0 has no propagator and nothing to expand. */
+export const diagramsInReach = (question: Question): boolean =>
+  inRange(question) && question.k >= 1 && diagramCount(question.n, question.k) <= mostDiagrams;
+
+/** Trees with k >= 1 by the expansion in MHV vertices, with the point's reference twistor and its Grassmann part. */
 export const vertexExpansion: Source = {
   name: "vertex expansion",
   reference: "arXiv:1009.1854 MHV Diagrams in Momentum Twistor Space",
   lineage: "vertex expansion",
-  covers: (question) => asksSuperamplitude(question, 0) && question.k === 1,
-  cost: (question) => planCost(vertexPlan(question.n), superGrading(1)),
-  size: (question) => sizeOf(planBound(vertexPlan(question.n), superGrading(1))),
+  covers: (question) => asksSuperamplitude(question, 0) && diagramsInReach(question),
+  cost: (question) => planCost(vertexPlanFor(question), superGrading(question.k)),
+  size: (question) => sizeOf(planBound(vertexPlanFor(question), superGrading(question.k))),
   evaluate(question: Question, point: Point<number>, prime: number): number | null {
     assertCovered(this.name, this.covers(question), question);
     const reference = { twistor: point.referenceTwistor, chi: point.referenceChi };
     const base = [...legsOf(point, question.n), reference];
-    return sumPlan(new Modulus(prime), vertexPlan(question.n), base, 1);
+    return sumPlan(new Modulus(prime), vertexPlanFor(question), base, question.k);
   },
 };
