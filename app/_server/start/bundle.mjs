@@ -10,13 +10,16 @@ export const programs = {
   equiform: { entry: "app/_server/cli/main.ts", sources: ["engine", "app/_server/cli"] },
   worker: { entry: "app/_server/checks/worker.ts", sources: server },
   "check-thread": { entry: "app/_server/checks/thread.ts", sources: ["engine", "app/_server/checks"] },
+  env: { entry: "app/_server/env.ts", sources: ["app/_server/env.ts"] },
   seed: { entry: "prisma/seed.ts", sources: server },
 };
 
 /** Newest modification time of a folder and everything in it, in milliseconds; a removed file counts through its folder. */
 function newest(path) {
   if (!existsSync(path)) return 0;
-  let latest = statSync(path).mtimeMs;
+  const own = statSync(path);
+  let latest = own.mtimeMs;
+  if (!own.isDirectory()) return latest;
   for (const entry of readdirSync(path, { withFileTypes: true })) {
     const child = join(path, entry.name);
     latest = Math.max(latest, entry.isDirectory() ? newest(child) : statSync(child).mtimeMs);

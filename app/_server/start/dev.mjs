@@ -1,7 +1,8 @@
 // `npm run dev`: the same with pages that follow their sources. The worker's bundle is made at the start.
-import { migrate, prepareCode } from "./prepare.mjs";
+import { migrate, prepareCode, settings } from "./prepare.mjs";
 import { run } from "./run.mjs";
 
 await prepareCode(["worker", "check-thread", "seed"]);
-migrate();
-await run("dev");
+const environment = await settings();
+migrate(environment.databaseUrl);
+await run("dev", environment);

@@ -2,7 +2,8 @@
 import { spawnSync } from "node:child_process";
 import { createHash } from "node:crypto";
 import { existsSync, readdirSync, readFileSync, writeFileSync } from "node:fs";
-import { join, resolve } from "node:path";
+import { join } from "node:path";
+import { pathToFileURL } from "node:url";
 import { checkNode, exclusively, install, root } from "./install.mjs";
 
 export { root } from "./install.mjs";
@@ -27,10 +28,17 @@ function step(name, args, quiet) {
   if (seconds > 1) console.error(`equiform: ${name} (${seconds.toFixed(0)} s)`);
 }
 
-/** Address of the database, as env.ts makes it; that one validates the rest. */
-export function databaseUrl() {
-  if (process.env.EQUIFORM_DATABASE_URL) return process.env.EQUIFORM_DATABASE_URL;
-  return `file:${join(resolve(process.env.EQUIFORM_DATA || "./data"), "equiform.db")}`;
+/** The environment, validated; ends the process with one clear line where it cannot be used. */
+export async function settings() {
+  const { bundle } = await import("./bundle.mjs");
+  await bundle("env");
+  const { parseEnvironment } = await import(pathToFileURL(join(root, "build", "env.mjs")).href);
+  try {
+    return parseEnvironment(process.env);
+  } catch (error) {
+    console.error(`equiform: ${error.message}`);
+    process.exit(2);
+  }
 }
 
 const pageSources = [
@@ -73,7 +81,7 @@ export async function prepareCode(programs) {
   for (const name of programs) await bundle(name);
 }
 
-export const migrate = () => step("database", ["prisma/migrate-deploy.mjs", databaseUrl()], false);
+export const migrate = (url) => step("database", ["prisma/migrate-deploy.mjs", url], false);
 
 /** Builds the pages unless they are those of today's sources. */
 export function buildPages() {

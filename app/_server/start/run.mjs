@@ -61,15 +61,14 @@ async function answers(port) {
 }
 
 /** Serves until a signal; `mode` is Next's: "start" or "dev". */
-export async function run(mode) {
-  const port = process.env.PORT || "3000";
+export async function run(mode, { port, workers }) {
   for (const signal of ["SIGINT", "SIGTERM", "SIGHUP"]) process.on(signal, () => end(0));
-  const server = start("the server", [join(root, "app", "_server", "start", "serve.mjs"), mode, port]);
+  const server = start("the server", [join(root, "app", "_server", "start", "serve.mjs"), mode, String(port)]);
   server.on("exit", (code) => {
     if (!ending) console.error("equiform: the server ended; its messages are above.");
     end(code ?? 1);
   });
-  if (process.env.EQUIFORM_WORKERS !== "0") keepWorker();
+  if (workers > 0) keepWorker();
   if (!(await answers(port))) {
     if (!ending) console.error(`equiform: the server did not answer on port ${port}.`);
     return end(1);

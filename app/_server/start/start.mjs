@@ -1,9 +1,10 @@
 // `npm start`: from a fresh clone to a served page, with nothing to configure.
-import { buildPages, migrate, prepareCode } from "./prepare.mjs";
+import { buildPages, migrate, prepareCode, settings } from "./prepare.mjs";
 import { run } from "./run.mjs";
 
 process.env.NODE_ENV = "production";
 await prepareCode(["worker", "check-thread", "seed"]);
-migrate();
+const environment = await settings();
+migrate(environment.databaseUrl);
 buildPages();
-await run("start");
+await run("start", environment);
