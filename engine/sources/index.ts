@@ -5,6 +5,7 @@ import { dualConformalIntegrals } from "./dualConformal";
 import { evenParts } from "./even";
 import { gluonRecursion } from "./gluonRecursion";
 import { logarithms } from "./log";
+import { loopVertexExpansion } from "./loopVertex";
 import { chiralPentagons, kermitExpansion, kermitExpansionReference } from "./oneLoopMhv";
 import { oneLoopRecursion } from "./oneLoopRecursion";
 import { recursion } from "./recursion";
@@ -27,6 +28,7 @@ export const sources: readonly Source[] = [
   kermitExpansionReference,
   chiralPentagons,
   oneLoopRecursion,
+  loopVertexExpansion,
   doublePentagons,
   dualConformalIntegrals,
   ...evenParts,

@@ -27,10 +27,10 @@ export function kermitPlan(n: number, pivot: "leg" | "reference"): Plan {
   return builder.finish(terms);
 }
 
-const kermitSource = (name: string, pivot: "leg" | "reference"): Source => ({
+const kermitSource = (name: string, pivot: "leg" | "reference", lineage: string): Source => ({
   name,
   reference: "arXiv:1008.2958 The All-Loop Integrand For Scattering Amplitudes in Planar N=4 SYM",
-  lineage: "on-shell recursion",
+  lineage,
   covers: asksOneLoopMhv,
   cost: (question) => planCost(kermitPlan(question.n, pivot), superGrading(0)),
   size: (question) => sizeOf(planBound(kermitPlan(question.n, pivot), superGrading(0))),
@@ -43,10 +43,10 @@ const kermitSource = (name: string, pivot: "leg" | "reference"): Source => ({
 });
 
 /** The one-loop MHV integrand as kermits seen from leg 1: the terms of the loop recursion, whence the lineage. */
-export const kermitExpansion = kermitSource("kermit expansion from leg 1", "leg");
+export const kermitExpansion = kermitSource("kermit expansion from leg 1", "leg", "on-shell recursion");
 
-/** The same sum from the reference twistor, on which it does not depend. */
-export const kermitExpansionReference = kermitSource("kermit expansion from a reference", "reference");
+/** The same sum from the reference twistor, on which it does not depend: its diagrams of MHV vertices (1009.1854). */
+export const kermitExpansionReference = kermitSource("kermit expansion from a reference", "reference", "vertex expansion");
 
 /**
  * The one-loop MHV integrand as chiral pentagons with the reference line X: the sum over i < j of

@@ -47,9 +47,11 @@ describe("gluon components", () => {
     [6, [1, 3, 5]],
     [7, [2, 4, 5]],
     [9, [1, 5, 6]],
+    [7, [1, 2, 4, 6]],
+    [8, [1, 3, 4, 6, 8]],
   ])("equal the vertex expansion at n = %d with negative legs %j (1009.1854)", (n, negativeLegs) => {
     const question = component(n, negativeLegs);
-    const point = randomPoint(n, 1, 0, n, prime);
+    const point = randomPoint(n, question.k, 0, n, prime);
     expect(vertexComponents.evaluate(question, point, prime)).toBe(
       recursionComponents.evaluate(question, point, prime),
     );

@@ -3,6 +3,8 @@ import { Modulus } from "../../../engine/sources/arithmetic";
 import { bracket } from "../../../engine/sources/determinants";
 import { dualConformalIntegrals } from "../../../engine/sources/dualConformal";
 import { loopPlan } from "../../../engine/sources/loopPlan";
+import { loopVertexExpansion } from "../../../engine/sources/loopVertex";
+import { loopDiagrams } from "../../../engine/sources/loopVertexPlan";
 import { chiralPentagons, kermitExpansion, kermitExpansionReference } from "../../../engine/sources/oneLoopMhv";
 import { oneLoopRecursion } from "../../../engine/sources/oneLoopRecursion";
 import { doublePentagons } from "../../../engine/sources/twoLoopMhv";
@@ -101,6 +103,33 @@ describe("one loop", () => {
     expect(oneLoopRecursion.evaluate(amplitude(n, k, 1), moved, prime)).toBe(
       m.divide(value, m.power(m.residue(3 * 2 - 5 * 7), 4)),
     );
+  });
+
+  // 1009.1854 against 1008.2958: MHV vertices with a reference twistor against single cuts and the forward limit.
+  it.each([
+    [4, 0],
+    [5, 0],
+    [9, 0],
+    [5, 1],
+    [6, 1],
+    [6, 2],
+    [7, 1],
+    [7, 2],
+    [7, 3],
+    [8, 2],
+  ])("has the same value by recursion and by MHV vertices at n = %d, k = %d", (n, k) => {
+    const point = randomPoint(n, k, 1, 8 * n + k, prime);
+    const value = oneLoopRecursion.evaluate(amplitude(n, k, 1), point, prime);
+    expect(value).not.toBe(0);
+    expect(loopVertexExpansion.evaluate(amplitude(n, k, 1), point, prime)).toBe(value);
+  });
+
+  it("has a pair of spokes for every diagram at k = 0, and only diagrams without one-leg arcs", () => {
+    expect(loopDiagrams(6, 2)).toHaveLength(15);
+    for (const { spokes, arcs } of loopDiagrams(6, 4)) {
+      expect(spokes.length + arcs.length).toBe(4);
+      for (const [from, to] of arcs) expect([2, 3, 4]).toContain((to - from + 6) % 6);
+    }
   });
 
   it("is null where a propagator vanishes", () => {

@@ -101,6 +101,8 @@ describe("answering", () => {
   it("has two lineages for whatever is meant to be checked in two ways", () => {
     const questions: Question[] = [
       amplitude(7, 1, 0),
+      amplitude(8, 3, 0),
+      amplitude(6, 2, 1),
       amplitude(6, 0, 1),
       amplitude(4, 0, 2),
       { ...amplitude(7, 2, 0), negativeLegs: [1, 2, 4, 6] },

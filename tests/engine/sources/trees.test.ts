@@ -5,6 +5,7 @@ import { legsOf } from "../../../engine/sources/question";
 import { planFor, recursion } from "../../../engine/sources/recursion";
 import { sumPlan } from "../../../engine/sources/runPlan";
 import { vertexExpansion } from "../../../engine/sources/vertex";
+import { diagrams } from "../../../engine/sources/vertexPlan";
 import { moveLegs, primes, randomPoint } from "../../support/randomPoint";
 import { paritySides } from "./parity";
 import { amplitude, reflection, rotation } from "./questions";
@@ -38,11 +39,20 @@ describe("on-shell recursion", () => {
     expect(recursion.evaluate(amplitude(n, k, 0), moveLegs(point, reflection(n)), prime)).toBe(value);
   });
 
-  it.each([5, 6, 7, 8, 9, 12])("equals the vertex expansion of 1009.1854 at n = %d, k = 1", (n) => {
-    const point = randomPoint(n, 1, 0, n, prime);
-    const value = recursion.evaluate(amplitude(n, 1, 0), point, prime);
-    expect(vertexExpansion.evaluate(amplitude(n, 1, 0), point, prime)).toBe(value);
-    expect(value).not.toBe(0);
+  it.each([...everyTree.filter(([, k]) => k > 0), [12, 1] as const, [10, 3] as const])(
+    "equals the vertex expansion of 1009.1854 at n = %d, k = %d",
+    (n, k) => {
+      const point = randomPoint(n, k, 0, n, prime);
+      const value = recursion.evaluate(amplitude(n, k, 0), point, prime);
+      expect(vertexExpansion.evaluate(amplitude(n, k, 0), point, prime)).toBe(value);
+      expect(value).not.toBe(0);
+    },
+  );
+
+  // Dissections of the hexagon and the heptagon by k diagonals, OEIS A033282.
+  it("has a vertex diagram for every dissection of the polygon", () => {
+    expect([0, 1, 2, 3].map((k) => diagrams(6, k).length)).toEqual([1, 9, 21, 14]);
+    expect([0, 1, 2, 3, 4].map((k) => diagrams(7, k).length)).toEqual([1, 14, 56, 84, 42]);
   });
 
   it.each([
