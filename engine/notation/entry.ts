@@ -90,7 +90,7 @@ export function readEntry(source: string): Result<Form> {
       ? "Save the file as UTF-8 without a byte-order mark."
       : "An entry document is one JSON object with amplitude and notation.";
     const reason = error instanceof Error ? error.message.replace(/\s+/g, " ").slice(0, 120) : "";
-    return failure({ code: "not-json", message: `This is not JSON${reason === "" ? "" : `: ${reason}`}.`, help });
+    return failure({ code: "json-syntax", message: `This is not JSON${reason === "" ? "" : `: ${reason}`}.`, help });
   }
   return readEntryValue(value);
 }
@@ -119,7 +119,7 @@ export function readEntryValue(value: unknown): Result<Form> {
     references: document.references ?? [],
     note: document.note ?? null,
   };
-  const found = validate(formula, { sizes: sizesOf(form, smallest + 3), loops });
+  const found = validate(formula, { n: sizesOf(form, smallest + 3), loops });
   return found.length > 0 ? failure(...found) : success(form);
 }
 
@@ -162,10 +162,20 @@ export function sizesOf(form: Form, largest: number): readonly number[] {
 function amplitudeFaults(range: Form["amplitude"]["n"], smallest: number, k: number): Diagnostic[] {
   const faults: Diagnostic[] = [];
   if (typeof range !== "number" && range.to !== null && range.to < range.from)
-    faults.push(fault("range", `The range of n from ${range.from} to ${range.to} is empty.`, "Let to be at least from."));
+    faults.push(
+      fault(
+        "amplitude-range",
+        `The range of n from ${range.from} to ${range.to} is empty.`,
+        "Let to be at least from.",
+      ),
+    );
   if (k > smallest - 4)
     faults.push(
-      fault("degree", `There is no amplitude with n = ${smallest} and k = ${k}: k is at most n-4.`, "N^kMHV has k from 0 (MHV) to n-4 (conjugate MHV)."),
+      fault(
+        "amplitude-degree",
+        `There is no amplitude with n = ${smallest} and k = ${k}: k is at most n-4.`,
+        "N^kMHV has k from 0 (MHV) to n-4 (conjugate MHV).",
+      ),
     );
   return faults;
 }
@@ -181,23 +191,47 @@ function readComponent(
   let negative: number[];
   if (typeof component === "string") {
     if (typeof range !== "number")
-      faults.push(fault("component", "A word of helicities fits one n only.", 'For a range write {"minus": [1, 2]}, the negative legs.'));
+      faults.push(
+        fault(
+          "component-legs",
+          "A word of helicities fits one n only.",
+          'For a range write {"minus": [1, 2]}, the negative legs.',
+        ),
+      );
     else if (!/^[+-]*$/.test(component))
-      faults.push(fault("component", "A component is a word of + and -.", 'One helicity for each leg, such as "--+-++".'));
+      faults.push(
+        fault("component-legs", "A component is a word of + and -.", 'One helicity for each leg, such as "--+-++".'),
+      );
     else if (component.length !== range)
-      faults.push(fault("component", `The component has ${component.length} helicities, the amplitude ${range} legs.`, "Give one helicity for each leg."));
+      faults.push(
+        fault(
+          "component-legs",
+          `The component has ${component.length} helicities, the amplitude ${range} legs.`,
+          "Give one helicity for each leg.",
+        ),
+      );
     negative = [...component].flatMap((helicity, i) => (helicity === "-" ? [i + 1] : []));
   } else {
     negative = [...component.minus].sort((a, b) => a - b);
     const beyond = negative.find((leg) => leg > smallest);
     if (beyond !== undefined)
-      faults.push(fault("component", `Leg ${beyond} is no leg at n = ${smallest}.`, `Negative legs are named by labels 1 to ${smallest}, the smallest n.`));
+      faults.push(
+        fault(
+          "component-legs",
+          `Leg ${beyond} is no leg at n = ${smallest}.`,
+          `Negative legs are named by labels 1 to ${smallest}, the smallest n.`,
+        ),
+      );
     if (new Set(negative).size < negative.length)
-      faults.push(fault("component", "A negative leg is named twice.", "Name each negative leg once."));
+      faults.push(fault("component-legs", "A negative leg is named twice.", "Name each negative leg once."));
   }
   if (faults.length === 0 && negative.length !== k + 2)
     faults.push(
-      fault("component", `The component has ${negative.length} negative legs; N^kMHV with k = ${k} has k+2 = ${k + 2}.`, "Change k or the helicities."),
+      fault(
+        "component-count",
+        `The component has ${negative.length} negative legs; N^kMHV with k = ${k} has k+2 = ${k + 2}.`,
+        "Change k or the helicities.",
+      ),
     );
   return { legs: negative, faults };
 }
@@ -206,6 +240,21 @@ const fault = (code: Code, message: string, help: string): Diagnostic => ({ code
 
 function fieldFault(issue: z.core.$ZodIssue): Diagnostic {
   const place = issue.path.length === 0 ? "The document" : issue.path.join(".");
-  const message = issue.code === "unrecognized_keys" ? `${place}: there is no field ${issue.keys.join(", ")}.` : `${place}: ${issue.message}.`;
-  return fault("document", message.replace(/\.\.$/, "."), "The fields of an entry document are amplitude, notation, component, target, s, title, method, references, note.");
+  const help =
+    "The fields of an entry document are amplitude, notation, component, target, s, title, method, references, note.";
+  if (issue.code === "unrecognized_keys")
+    return fault("entry-unknown-field", `${place}: there is no field ${issue.keys.join(", ")}.`, help);
+  const missing = issue.code === "invalid_type" && issue.message.endsWith("received undefined");
+  const code = missing
+    ? "entry-missing"
+    : (fieldCodes[issue.path.join(".")] ?? (issue.code === "invalid_type" ? "entry-type" : "entry-value"));
+  return fault(code, missing ? `${place} is missing.` : `${place}: ${issue.message}.`, help);
 }
+
+const fieldCodes: Readonly<Record<string, Code>> = {
+  "amplitude.n": "amplitude-legs",
+  "amplitude.n.from": "amplitude-legs",
+  "amplitude.n.to": "amplitude-legs",
+  "amplitude.k": "amplitude-degree",
+  "amplitude.loops": "amplitude-loops",
+};
