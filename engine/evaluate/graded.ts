@@ -5,12 +5,17 @@
 import type { Field } from "../fields";
 import { determinant } from "../kinematics";
 
-/** rows[flavour][i] is a vector of F^k; the element is coefficient times the wedge of the rows in each flavour. */
-interface Rows<T> {
-  readonly kind: "rows";
-  readonly degree: number;
+/** One product of deltas: rows[flavour][i] is a vector of F^k; it is worth coefficient times the wedge of the rows in each flavour. */
+interface Product<T> {
   readonly coefficient: T;
   readonly rows: readonly (readonly (readonly T[])[])[];
+}
+
+/** A sum of products of `degree` deltas each. */
+interface Products<T> {
+  readonly kind: "products";
+  readonly degree: number;
+  readonly products: readonly Product<T>[];
 }
 
 /** C(k,degree)^4 components: subsets of columns in ascending order of their bit sets, the first flavour slowest. */
@@ -20,8 +25,11 @@ interface Dense<T> {
   readonly entries: readonly T[];
 }
 
-/** A homogeneous element: rows while it is one product of deltas, components once such products were added or degree k is reached. */
-export type Homogeneous<T> = Rows<T> | Dense<T>;
+/** A homogeneous element: products of deltas while they are few, components once they are many or degree k is reached. */
+export type Homogeneous<T> = Products<T> | Dense<T>;
+
+/** Up to so many products are kept apart: multiplying them one by one is cheaper than multiplying components. */
+const MOST_PRODUCTS = 16;
 
 const FLAVOURS = 4;
 
@@ -60,14 +68,13 @@ export class GradedAlgebra<T> {
 
   /** delta times a coefficient: `rows` holds one vector of F^k for each flavour. */
   delta(coefficient: T, rows: readonly (readonly T[])[]): Homogeneous<T> {
-    return this.close({ kind: "rows", degree: 1, coefficient, rows: rows.map((row) => [row]) });
+    return this.close({ kind: "products", degree: 1, products: [{ coefficient, rows: rows.map((row) => [row]) }] });
   }
 
   scale(a: Homogeneous<T>, factor: T): Homogeneous<T> {
     const { multiply } = this.field;
-    return a.kind === "rows"
-      ? { ...a, coefficient: multiply(a.coefficient, factor) }
-      : { ...a, entries: a.entries.map((x) => multiply(x, factor)) };
+    if (a.kind === "dense") return { ...a, entries: a.entries.map((x) => multiply(x, factor)) };
+    return { ...a, products: a.products.map((p) => ({ ...p, coefficient: multiply(p.coefficient, factor) })) };
   }
 
   /** The sum of elements of one degree, at least one. */
@@ -75,13 +82,14 @@ export class GradedAlgebra<T> {
     const [first, ...rest] = summands;
     if (first === undefined) throw new Error("GradedAlgebra.add: expected at least one element");
     if (rest.length === 0) return first;
-    const sum = [...this.entries(first)];
-    for (const next of rest) {
-      this.entries(next).forEach((x, i) => {
-        sum[i] = this.field.add(sum[i]!, x);
-      });
+    const { degree } = first;
+    const products = summands.flatMap((a) => (a.kind === "products" ? a.products : []));
+    if (products.length <= MOST_PRODUCTS && summands.every((a) => a.kind === "products")) {
+      return { kind: "products", degree, products };
     }
-    return { kind: "dense", degree: first.degree, entries: sum };
+    const sum = [...this.entries(first)];
+    for (const next of rest) this.accumulate(sum, this.entries(next));
+    return { kind: "dense", degree, entries: sum };
   }
 
   multiply(a: Homogeneous<T>, b: Homogeneous<T>): Homogeneous<T> {
@@ -89,14 +97,24 @@ export class GradedAlgebra<T> {
     if (degree > this.k) return { kind: "dense", degree, entries: [] };
     if (a.degree === 0) return this.scale(b, this.entries(a)[0]!);
     if (b.degree === 0) return this.scale(a, this.entries(b)[0]!);
-    if (a.kind === "rows" && b.kind === "rows") {
-      const rows = a.rows.map((flavour, f) => [...flavour, ...b.rows[f]!]);
-      const coefficient = this.field.multiply(a.coefficient, b.coefficient);
-      return this.close({ kind: "rows", degree, coefficient, rows });
+    if (a.kind === "products" && b.kind === "products") {
+      if (a.products.length * b.products.length > MOST_PRODUCTS ** 2 / 4) return this.multiply(this.dense(a), b);
+      const products = a.products.flatMap((x) =>
+        b.products.map((y) => ({
+          coefficient: this.field.multiply(x.coefficient, y.coefficient),
+          rows: x.rows.map((flavour, f) => [...flavour, ...y.rows[f]!]),
+        })),
+      );
+      return this.close({ kind: "products", degree, products });
     }
-    if (b.kind === "rows") return this.wedgeRows(this.dense(a), b);
-    if (a.kind === "rows") return this.wedgeRows(this.dense(b), a);
-    return this.wedge(a, b);
+    if (a.kind === "dense" && b.kind === "dense") return this.wedge(a, b);
+    const [components, factors] = a.kind === "dense" ? [a, b as Products<T>] : [b as Dense<T>, a];
+    const size = this.columns(degree).length ** FLAVOURS;
+    const sum = new Array<T>(size).fill(this.field.zero);
+    for (const product of factors.products) {
+      this.accumulate(sum, this.wedgeProduct(components, factors.degree, product));
+    }
+    return { kind: "dense", degree, entries: sum };
   }
 
   /**
@@ -108,8 +126,14 @@ export class GradedAlgebra<T> {
   }
 
   /** Elements of the top degree are one number, and of a higher one nothing: no need to keep their rows. */
-  private close(a: Rows<T>): Homogeneous<T> {
-    return a.degree < this.k ? a : this.dense(a);
+  private close(a: Products<T>): Homogeneous<T> {
+    return a.degree < this.k && a.products.length <= MOST_PRODUCTS ? a : this.dense(a);
+  }
+
+  private accumulate(sum: T[], entries: readonly T[]): void {
+    entries.forEach((x, i) => {
+      sum[i] = this.field.add(sum[i]!, x);
+    });
   }
 
   private columns(degree: number): number[] {
@@ -126,9 +150,9 @@ export class GradedAlgebra<T> {
   }
 
   /** minors[flavour][I]: of the rows of that flavour and the columns of subset I. */
-  private minors(a: Rows<T>): T[][] {
-    return a.rows.map((flavour) =>
-      this.columns(a.degree).map((set) =>
+  private minors(degree: number, { rows }: Product<T>): T[][] {
+    return rows.map((flavour) =>
+      this.columns(degree).map((set) =>
         determinant(
           this.field,
           flavour.map((row) => row.filter((_, column) => (set >> column) & 1)),
@@ -139,10 +163,17 @@ export class GradedAlgebra<T> {
 
   private dense(a: Homogeneous<T>): Dense<T> {
     if (a.kind === "dense") return a;
-    const { multiply } = this.field;
-    let entries = [a.coefficient];
-    for (const minors of this.minors(a)) entries = entries.flatMap((x) => minors.map((m) => multiply(x, m)));
-    return { kind: "dense", degree: a.degree, entries: this.columns(a.degree).length === 0 ? [] : entries };
+    const { degree } = a;
+    const sum = new Array<T>(this.columns(degree).length ** FLAVOURS).fill(this.field.zero);
+    if (sum.length === 0) return { kind: "dense", degree, entries: [] };
+    for (const product of a.products) {
+      let entries = [product.coefficient];
+      for (const minors of this.minors(degree, product)) {
+        entries = entries.flatMap((x) => minors.map((m) => this.field.multiply(x, m)));
+      }
+      this.accumulate(sum, entries);
+    }
+    return { kind: "dense", degree, entries: sum };
   }
 
   /** For each pair of disjoint subsets of the two degrees: their places, the place of their union, and the sign. */
@@ -155,13 +186,13 @@ export class GradedAlgebra<T> {
     );
   }
 
-  /** Components times rows, one flavour after the other. */
-  private wedgeRows(a: Dense<T>, b: Rows<T>): Homogeneous<T> {
+  /** Components times one product of deltas, one flavour after the other. */
+  private wedgeProduct(a: Dense<T>, degree: number, product: Product<T>): readonly T[] {
     const { field } = this;
-    const pairs = this.pairs(a.degree, b.degree);
-    const [before, after] = [this.columns(a.degree).length, this.columns(a.degree + b.degree).length];
-    let entries = a.entries.map((x) => field.multiply(x, b.coefficient));
-    this.minors(b).forEach((minors, flavour) => {
+    const pairs = this.pairs(a.degree, degree);
+    const [before, after] = [this.columns(a.degree).length, this.columns(a.degree + degree).length];
+    let entries = a.entries.map((x) => field.multiply(x, product.coefficient));
+    this.minors(degree, product).forEach((minors, flavour) => {
       const outer = after ** flavour;
       const inner = before ** (FLAVOURS - 1 - flavour);
       const next = new Array<T>(outer * after * inner).fill(field.zero);
@@ -176,7 +207,7 @@ export class GradedAlgebra<T> {
       }
       entries = next;
     });
-    return { kind: "dense", degree: a.degree + b.degree, entries };
+    return entries;
   }
 
   /** Components times components: all pairs of disjoint subsets in each of the four flavours. */
