@@ -1,5 +1,6 @@
 import type { Report } from "../../engine/checks/report";
 import { Diagnostics } from "./Diagnostics";
+import { Prose } from "./Prose";
 
 /** What is wrong with a form: the sentences of the diagnosis, then the places in its source. */
 export function Diagnosis({ report, source }: { report: Report; source: string | null }) {
@@ -18,7 +19,9 @@ export function Diagnosis({ report, source }: { report: Report; source: string |
   return (
     <>
       {sentences.map((found) => (
-        <p key={`${found.code} ${found.message}`}>{found.message}</p>
+        <p key={`${found.code} ${found.message}`}>
+          <Prose text={found.message} />
+        </p>
       ))}
       {diagnostics.length > 0 && <Diagnostics source={source ?? ""} diagnostics={diagnostics} />}
       {report.diagnosis.length === 0 && report.diagnostics.length === 0 && report.verdict === "disagrees" && (

@@ -1,6 +1,7 @@
 import type { Mark, MarkCode, Report } from "../../engine/checks/report";
 import styles from "./Marks.module.css";
 import { markSentence, marks, readingOrder } from "./marks";
+import { Prose } from "./Prose";
 
 /** One mark as a sentence with its evidence; nothing for a mark that states nothing. */
 export function MarkSentence({ code, mark }: { code: MarkCode; mark: Mark }) {
@@ -10,7 +11,12 @@ export function MarkSentence({ code, mark }: { code: MarkCode; mark: Mark }) {
     <li>
       {sentence}
       {mark.subgroup !== undefined && <> Manifest is the subgroup {mark.subgroup}.</>}
-      {mark.evidence !== "" && <span className={styles.evidence}> {mark.evidence}</span>}
+      {mark.evidence !== "" && (
+        <span className={styles.evidence}>
+          {" "}
+          <Prose text={mark.evidence} />
+        </span>
+      )}
     </li>
   );
 }
@@ -38,7 +44,12 @@ export function Marks({ marks: given }: { marks: Report["marks"] }) {
             {silent.map(({ code, mark }) => (
               <li key={code}>
                 {marks[code].name} {mark.state === "untested" ? "was not tested." : "does not apply."}
-                {mark.evidence !== "" && <span className={styles.evidence}> {mark.evidence}</span>}
+                {mark.evidence !== "" && (
+                  <span className={styles.evidence}>
+                    {" "}
+                    <Prose text={mark.evidence} />
+                  </span>
+                )}
               </li>
             ))}
           </ul>

@@ -1,7 +1,8 @@
 import type { Comparison, Report } from "../../engine/checks/report";
 import type { VersionState } from "../_contract";
 import { Bound } from "./Bound";
-import { listed, numbered } from "./words";
+import { Prose } from "./Prose";
+import { decapital, listed, numbered } from "./words";
 
 /** The state of a version in words, for a table. */
 export const stateWords: Record<VersionState, string> = {
@@ -44,6 +45,21 @@ export function StateSentence({ state, report }: { state: VersionState; report: 
       </>
     );
   }
-  if (state === "held") return <>Held: {report.summary}</>;
-  return <>Not accepted: {report.summary}</>;
+  if (state === "held")
+    return (
+      <>
+        Held: <Prose text={reason(report.summary)} />
+      </>
+    );
+  return (
+    <>
+      Not accepted: <Prose text={reason(report.summary)} />
+    </>
+  );
+}
+
+/** The report's sentence as the second half of one: without the verdict at its head, or with it as a verb. */
+function reason(summary: string): string {
+  const without = summary.replace(/^(Disagrees|Undecided): /, "");
+  return without.startsWith("Disagrees") ? `it ${decapital(without)}` : decapital(without);
 }

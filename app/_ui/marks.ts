@@ -1,5 +1,6 @@
 /** What each mark says, in sentences: one for every state that states something. Their order is the order of reading. */
 import type { Mark, MarkCode } from "../../engine/checks/report";
+import { decapital } from "./words";
 
 interface Sentences {
   /** Name for the sentence "... was not tested" and for a table. */
@@ -143,5 +144,5 @@ const shortWords = {
 
 /** Names of the marks by code, small letters, for a sentence. */
 export const markNames: ReadonlyMap<string, string> = new Map(
-  readingOrder.map((code) => [code, marks[code].name.charAt(0).toLowerCase() + marks[code].name.slice(1)]),
+  readingOrder.map((code) => [code, decapital(marks[code].name)]),
 );

@@ -16,6 +16,9 @@ export function numbered(count: number, noun: string, plural = `${noun}s`): stri
 /** First letter made a capital. */
 export const capital = (text: string): string => text.charAt(0).toUpperCase() + text.slice(1);
 
+/** First letter made small, for a sentence in a sentence. */
+export const decapital = (text: string): string => text.charAt(0).toLowerCase() + text.slice(1);
+
 /** "1 December 2025", in UTC so that server and reader see the same day. */
 export const dated = (iso: string): string =>
   new Date(iso).toLocaleDateString("en-GB", { day: "numeric", month: "long", year: "numeric", timeZone: "UTC" });

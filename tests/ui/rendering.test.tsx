@@ -62,7 +62,7 @@ describe("sentences", () => {
     poles: [],
     diagnosis: [],
     diagnostics: [],
-    summary: "it is twice the amplitude.",
+    summary: "Disagrees: The form is twice the truth.",
   };
 
   it("claim no more than the weakest bound", () => {
@@ -75,7 +75,15 @@ describe("sentences", () => {
 
   it("give the reason of a refusal", () => {
     const html = renderToStaticMarkup(<StateSentence state="refused" report={report} />);
-    expect(html).toBe("Not accepted: it is twice the amplitude.");
+    expect(html).toBe("Not accepted: the form is twice the truth.");
+    const range = { ...report, summary: "Disagrees at n = 7: an amplitude is cyclic, and this form is not." };
+    expect(renderToStaticMarkup(<StateSentence state="refused" report={range} />)).toBe(
+      "Not accepted: it disagrees at n = 7: an amplitude is cyclic, and this form is not.",
+    );
+    const held = { ...report, summary: "Undecided: there is nothing to compare with." };
+    expect(renderToStaticMarkup(<StateSentence state="held" report={held} />)).toBe(
+      "Held: there is nothing to compare with.",
+    );
   });
 
   it("set a bound as a power", () => {

@@ -3,7 +3,9 @@ import { ComparisonTable } from "../../../_ui/ComparisonTable";
 import { Diagnosis } from "../../../_ui/Diagnosis";
 import { Marks } from "../../../_ui/MarkSentence";
 import { Lead, Opening, Page, Section } from "../../../_ui/Page";
+import { Prose } from "../../../_ui/Prose";
 import { SourceText } from "../../../_ui/SourceText";
+import { StateSentence } from "../../../_ui/StateSentence";
 
 type Report = NonNullable<CheckView["report"]>;
 
@@ -21,7 +23,7 @@ export function VerdictArticle({ check, report }: { check: CheckView; report: Re
   return (
     <Page>
       <Opening kicker={check.title ?? check.version} title={accepted ? "Accepted" : titles[report.verdict]}>
-        <Lead>{report.summary}</Lead>
+        <Lead>{accepted ? <StateSentence state="accepted" report={report} /> : <Prose text={report.summary} />}</Lead>
         <p>{nextSteps(check, report)}</p>
       </Opening>
       {wrong && (
