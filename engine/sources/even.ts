@@ -9,6 +9,7 @@ import { chiralPentagons, kermitExpansion } from "./oneLoopMhv";
 import { assertCovered, cyclic, inRange } from "./question";
 import type { Question, SizeBound, Source } from "./source";
 import { doublePentagons } from "./twoLoopMhv";
+import { twoLoopVertexExpansion } from "./twoLoopVertex";
 
 const asksEven = (question: Question): boolean =>
   question.target === "even" && question.negativeLegs === null && question.k === 0 && inRange(question);
@@ -116,6 +117,8 @@ const farPairs = (n: number): [number, number][] =>
   );
 
 export const evenParts: readonly Source[] = [
-  ...[kermitExpansion, chiralPentagons, doublePentagons, dualConformalIntegrals].map(evenPartOf),
+  ...[kermitExpansion, chiralPentagons, doublePentagons, twoLoopVertexExpansion, dualConformalIntegrals].map(
+    evenPartOf,
+  ),
   halfBoxes,
 ];

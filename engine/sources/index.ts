@@ -11,6 +11,7 @@ import { oneLoopRecursion } from "./oneLoopRecursion";
 import { recursion } from "./recursion";
 import type { Question, Source } from "./source";
 import { doublePentagons } from "./twoLoopMhv";
+import { twoLoopVertexExpansion } from "./twoLoopVertex";
 import { vertexExpansion } from "./vertex";
 import { zero } from "./zero";
 
@@ -30,6 +31,7 @@ export const sources: readonly Source[] = [
   oneLoopRecursion,
   loopVertexExpansion,
   doublePentagons,
+  twoLoopVertexExpansion,
   dualConformalIntegrals,
   ...evenParts,
   ...logarithms,

@@ -6,10 +6,11 @@ import type { Point } from "../kinematics/point";
 import { Modulus } from "./arithmetic";
 import { addBounds, type Bound, boundOf, multiplyBounds, polynomial, sizeOf } from "./bound";
 import { dualConformalIntegrals } from "./dualConformal";
-import { chiralPentagons } from "./oneLoopMhv";
+import { chiralPentagons, kermitExpansionReference } from "./oneLoopMhv";
 import { assertCovered, inRange } from "./question";
 import type { Question, Source } from "./source";
 import { doublePentagons } from "./twoLoopMhv";
+import { twoLoopVertexExpansion } from "./twoLoopVertex";
 
 /** A product of integrands, each over some of the loops, with an integer coefficient. */
 interface Product {
@@ -83,6 +84,7 @@ const logarithmOf = (name: string, integrands: readonly Source[]): Source => ({
 
 export const logarithms: readonly Source[] = [
   logarithmOf("logarithm of local integrands", [chiralPentagons, doublePentagons]),
+  logarithmOf("logarithm of vertex expansions", [kermitExpansionReference, twoLoopVertexExpansion]),
   logarithmOf("logarithm of dual-conformal integrals", [
     dualConformalIntegrals,
     dualConformalIntegrals,

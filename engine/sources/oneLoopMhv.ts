@@ -46,7 +46,11 @@ const kermitSource = (name: string, pivot: "leg" | "reference", lineage: string)
 export const kermitExpansion = kermitSource("kermit expansion from leg 1", "leg", "on-shell recursion");
 
 /** The same sum from the reference twistor, on which it does not depend: its diagrams of MHV vertices (1009.1854). */
-export const kermitExpansionReference = kermitSource("kermit expansion from a reference", "reference", "vertex expansion");
+export const kermitExpansionReference = kermitSource(
+  "kermit expansion from a reference",
+  "reference",
+  "vertex expansion",
+);
 
 /**
  * The one-loop MHV integrand as chiral pentagons with the reference line X: the sum over i < j of

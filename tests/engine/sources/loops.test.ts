@@ -8,6 +8,7 @@ import { loopDiagrams } from "../../../engine/sources/loopVertexPlan";
 import { chiralPentagons, kermitExpansion, kermitExpansionReference } from "../../../engine/sources/oneLoopMhv";
 import { oneLoopRecursion } from "../../../engine/sources/oneLoopRecursion";
 import { doublePentagons } from "../../../engine/sources/twoLoopMhv";
+import { twoLoopVertexExpansion } from "../../../engine/sources/twoLoopVertex";
 import { moveLegs, primes, randomPoint } from "../../support/randomPoint";
 import { paritySides } from "./parity";
 import { amplitude, reflection, rotation } from "./questions";
@@ -136,6 +137,8 @@ describe("one loop", () => {
     const point = randomPoint(6, 1, 1, 2, prime);
     const lines = [[point.twistors[1]!, point.lines[0]![1]] as const];
     expect(oneLoopRecursion.evaluate(amplitude(6, 1, 1), { ...point, lines }, prime)).toBeNull();
+    const both = { ...point, k: 0, loops: 2, lines: [...lines, ...point.lines] };
+    expect(doublePentagons.evaluate(amplitude(6, 0, 2), both, prime)).toBeNull();
     for (const source of [kermitExpansion, kermitExpansionReference, chiralPentagons]) {
       expect(source.evaluate(amplitude(6, 0, 1), { ...point, k: 0, lines }, prime), source.name).toBeNull();
     }
@@ -175,6 +178,13 @@ describe("two loops", () => {
     expect(doublePentagons.evaluate(amplitude(n, 0, 2), moveLegs(point, reflection(n)), prime)).toBe(value);
     const lines = [point.lines[1]!, point.lines[0]!];
     expect(doublePentagons.evaluate(amplitude(n, 0, 2), { ...point, lines }, prime)).toBe(value);
+  });
+
+  // 1009.1854 against 1012.6032: MHV vertices with a reference twistor against local integrals.
+  it.each([4, 5, 6, 7, 8, 10])("have the same value by double pentagons and by MHV vertices at n = %d", (n) => {
+    const point = randomPoint(n, 0, 2, 3 * n, prime);
+    const value = doublePentagons.evaluate(amplitude(n, 0, 2), point, prime);
+    expect(twoLoopVertexExpansion.evaluate(amplitude(n, 0, 2), point, prime)).toBe(value);
   });
 
   it("turns into the parity conjugate at n = 4", () => {

@@ -47,15 +47,24 @@ describe("even parts", () => {
     const [here] = valuesOf(asked(n, loops, "even"), point);
     const [there] = valuesOf(asked(n, loops, "even"), image);
     expect(m.multiply(factor, there!)).toBe(here);
+    for (const value of valuesOf(asked(n, loops, "even"), point)) expect(value).toBe(here);
   });
 });
 
 describe("logarithms", () => {
-  it("agree between local integrands and dual-conformal integrals at n = 4", () => {
-    const values = valuesOf(asked(4, 2, "log"), randomPoint(4, 0, 2, 8, prime));
-    expect(values).toHaveLength(2);
-    expect(values[0]).toBe(values[1]);
-  });
+  it.each([
+    [4, 3],
+    [5, 2],
+    [7, 2],
+  ])(
+    "agree between local integrands, vertices and, at n = 4, dual-conformal integrals: n = %d, %d sources",
+    (n, many) => {
+      const values = valuesOf(asked(n, 2, "log"), randomPoint(n, 0, 2, 8, prime));
+      expect(values).toHaveLength(many);
+      expect(new Set(values).size).toBe(1);
+      expect(values[0]).not.toBe(0);
+    },
+  );
 
   // 1012.6032 and 1412.8478: with AB near leg i and in its plane an amplitude goes as e^-2, the logarithm as e^-1.
   it.each([
@@ -105,9 +114,12 @@ describe("answering", () => {
       amplitude(6, 2, 1),
       amplitude(6, 0, 1),
       amplitude(4, 0, 2),
+      amplitude(7, 0, 2),
       { ...amplitude(7, 2, 0), negativeLegs: [1, 2, 4, 6] },
       asked(5, 1, "even"),
       asked(4, 2, "log"),
+      asked(6, 2, "log"),
+      asked(6, 2, "even"),
     ];
     for (const question of questions) {
       expect(new Set(answering(question).map((source) => source.lineage)).size).toBeGreaterThanOrEqual(2);
