@@ -150,7 +150,7 @@ export const dualConformalIntegrals: Source = {
   lineage: "dual-conformal integrals",
   covers: ({ loops, ...question }) =>
     [1, 2, 3].includes(loops) && asksSuperamplitude({ ...question, loops }, loops) && question.n === 4,
-  cost: ({ loops }) => 1000 + termsAt(loops).length * 20,
+  cost: ({ loops }) => termsAt(loops).length * 1000,
   size({ loops }) {
     const terms = termsAt(loops).map(({ numerator, denominator }) =>
       multiplyBounds(

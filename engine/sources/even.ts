@@ -77,7 +77,7 @@ const halfBoxes: Source = {
   reference: "arXiv:hep-ph/9403226 One-Loop n-Point Gauge Theory Amplitudes, Unitarity and Collinear Limits",
   lineage: "box expansion",
   covers: (question) => asksEven(question) && question.loops === 1,
-  cost: ({ n }) => 40 * n * n + 80 * n,
+  cost: ({ n }) => 140 * n * n + 160 * n,
   size({ n }) {
     const terms = farPairs(n).map(([i, j]) =>
       multiplyBounds(

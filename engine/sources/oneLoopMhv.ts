@@ -61,7 +61,7 @@ export const chiralPentagons: Source = {
   reference: "arXiv:1012.6032 Local Integrals for Planar Scattering Amplitudes",
   lineage: "chiral pentagons",
   covers: asksOneLoopMhv,
-  cost: ({ n }) => 60 * n * n + 80 * n,
+  cost: ({ n }) => 120 * n * n + 160 * n,
   size({ n }) {
     const terms = pairs(n).map(([i, j]) =>
       multiplyBounds(

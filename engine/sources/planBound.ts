@@ -77,17 +77,17 @@ export function planBound(plan: Plan, grading: Grading): Bound {
   );
 }
 
-/** Products modulo the prime for one point, counted from above. */
+/** Field operations for one point, counted from above: the products, each with at most one sum. */
 export function planCost(plan: Plan, grading: Grading): number {
   const width = grading.flavours * grading.dimension;
   const size = grading.dimension;
   const determinant = size < 3 ? 2 : size * 2 ** (size - 1);
-  return (
+  const products =
     plan.meets.length * (140 + 5 * width) +
     plan.invariants.length * (80 + 5 * width) +
     plan.kermits.length * 320 +
-    plan.terms.length * (grading.flavours * (determinant + 3) + 2 * size + 4)
-  );
+    plan.terms.length * (grading.flavours * (determinant + 3) + 2 * size + 4);
+  return 2 * products;
 }
 
 function pointSizes(plan: Plan, grading: Grading): PointSize[] {

@@ -29,7 +29,7 @@ export const doublePentagons: Source = {
   reference: "arXiv:1012.6032 Local Integrals for Planar Scattering Amplitudes",
   lineage: "local double pentagons",
   covers: (question) => asksSuperamplitude(question, 2) && question.k === 0 && question.n <= 24,
-  cost: ({ n }) => 200 * n * n + 40 * cyclicFours(n).length,
+  cost: ({ n }) => 200 * n * n + 80 * cyclicFours(n).length,
   size({ n }) {
     const terms = cyclicFours(n).map(([i, j, k, l]) =>
       multiplyBounds(
