@@ -51,7 +51,8 @@ export function helicityPoint<T>(
   size: (x: T) => number = () => 1,
 ): HelicityPoint<T> | null {
   const k = negativeLegs.length - 2;
-  if (k !== point.k) throw new Error(`helicityPoint: expected ${point.k + 2} negative legs, got ${negativeLegs.length}`);
+  if (k !== point.k)
+    throw new Error(`helicityPoint: expected ${point.k + 2} negative legs, got ${negativeLegs.length}`);
   const { add, multiply, negate, subtract, zero } = field;
   const between = (a: number, b: number): T => angle(field, point.twistors[a - 1]!, point.twistors[b - 1]!);
   let cycle = field.one;

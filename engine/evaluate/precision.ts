@@ -2,8 +2,18 @@
  * Values in double precision, with an estimate of how many digits they have: the form is evaluated again in other frames, where
  * every number is rounded differently. In exact arithmetic nothing would change; the largest difference is the estimate.
  */
-import { type Complex, complexDoubles, magnitude, type Randomness, randomness } from "../fields";
-import { type Point, transformPoint } from "../kinematics";
+import {
+  type Complex,
+  complexDoubles,
+  fromWide,
+  magnitude,
+  type Randomness,
+  randomness,
+  toWide,
+  type WideComplex,
+  wideComplex,
+} from "../fields";
+import { mapPoint, type Point, transformPoint } from "../kinematics";
 import type { Span } from "../result";
 import { evaluateForm } from "./evaluate";
 import type { FormAtN } from "./form";
@@ -52,44 +62,63 @@ function unimodular(random: Randomness): Matrix {
   ];
 }
 
-/**
- * A change of frame of all twistors: angle and square spinors turn by a matrix of determinant 1 each, and the origin of dual space
- * moves. Every bracket of the notation keeps its value.
- */
-function frame(random: Randomness): Matrix {
-  const { zero } = complexDoubles;
-  const [angles, squares] = [unimodular(random), unimodular(random)];
-  const origin = [0, 1].map(() => [draw(random), draw(random)]);
-  return [...angles.map((row) => [...row, zero, zero]), ...squares.map((row, i) => [...origin[i]!, ...row])];
+/** Parts of a change of frame: two matrices of determinant 1 for the spinors and the move of the origin, in units of the point. */
+interface Frame {
+  readonly angles: Matrix;
+  readonly squares: Matrix;
+  readonly origin: Matrix;
 }
 
-let known: readonly Matrix[] | null = null;
+let known: readonly Frame[] | null = null;
 
 /** The same frames for everybody, so that an estimate can be repeated. */
-function frames(): readonly Matrix[] {
+function frames(): readonly Frame[] {
   if (known === null) {
     const random = randomness("equiform-frames-1");
-    known = Array.from({ length: FRAMES }, () => frame(random));
+    known = Array.from({ length: FRAMES }, () => ({
+      angles: unimodular(random),
+      squares: unimodular(random),
+      origin: [0, 1].map(() => [draw(random), draw(random)]),
+    }));
   }
   return known;
 }
 
-const isFinite = ({ re, im }: Complex<number>): boolean => Number.isFinite(re) && Number.isFinite(im);
+/** How large dual points are: mu over lambda, each the largest of the legs'. */
+function dualSize({ twistors }: Point<Complex<number>>): number {
+  const largest = (from: number): number =>
+    Math.max(0, ...twistors.flatMap((z) => z.slice(from, from + 2).map(magnitude)));
+  const size = largest(2) / largest(0);
+  return Number.isFinite(size) ? size : 1;
+}
+
+/** The point in another frame, in which every bracket of the notation has the value that it had. */
+function inFrame(point: Point<Complex<number>>, { angles, squares, origin }: Frame): Point<Complex<number>> {
+  const { multiply, real, zero } = complexDoubles;
+  const size = real(dualSize(point));
+  return transformPoint(complexDoubles, point, [
+    ...angles.map((row) => [...row, zero, zero]),
+    ...squares.map((row, i) => [...origin[i]!.map((x) => multiply(size, x)), ...row]),
+  ]);
+}
+
+const sizeOfWide = (x: WideComplex): number => magnitude(fromWide(x) ?? complexDoubles.zero);
 
 function valueAt(
   form: FormAtN,
-  point: Point<Complex<number>>,
+  doubles: Point<Complex<number>>,
   negativeLegs: readonly number[] | null,
 ): { readonly kind: "value"; readonly value: Complex<number> } | NoValue {
+  const point = mapPoint(doubles, toWide);
   const at =
     negativeLegs === null
-      ? { point, factor: complexDoubles.one }
-      : helicityPoint(complexDoubles, point, negativeLegs, magnitude);
+      ? { point, factor: wideComplex.one }
+      : helicityPoint(wideComplex, point, negativeLegs, sizeOfWide);
   if (at === null) return { kind: "parallel" };
-  const evaluation = evaluateForm(complexDoubles, form, at.point);
+  const evaluation = evaluateForm(wideComplex, form, at.point);
   if (evaluation.kind !== "value") return { kind: "zero-denominator", span: evaluation.span };
-  const value = complexDoubles.multiply(evaluation.sum, at.factor);
-  return isFinite(value) ? { kind: "value", value } : { kind: "out-of-range" };
+  const value = fromWide(wideComplex.multiply(evaluation.sum, at.factor));
+  return value === null ? { kind: "out-of-range" } : { kind: "value", value };
 }
 
 /** How many digits a value with this error has. */
@@ -113,12 +142,10 @@ export function evaluateApproximately(
   if (first.kind !== "value") return first;
   const size = magnitude(first.value);
   let error = 0;
-  for (const matrix of frames()) {
-    const again = valueAt(form, transformPoint(complexDoubles, point, matrix), negativeLegs);
+  for (const frame of frames()) {
+    const again = valueAt(form, inFrame(point, frame), negativeLegs);
     const difference =
-      again.kind === "value"
-        ? magnitude(complexDoubles.subtract(again.value, first.value))
-        : Number.POSITIVE_INFINITY;
+      again.kind === "value" ? magnitude(complexDoubles.subtract(again.value, first.value)) : Number.POSITIVE_INFINITY;
     error = Math.max(error, CAUTION * difference);
   }
   error = Math.max(error, size * LEAST_ERROR) + size * deviation;
