@@ -2,6 +2,7 @@
 import type { Graph, Ref } from "./graph";
 import { INPUT, negated } from "./graph";
 import { BASIS, CHI, LOOP_POINT, REFERENCE_CHI, REFERENCE_LINE_POINT, REFERENCE_TWISTOR, TWISTOR } from "./inputs";
+import { TupleTable } from "./tuples";
 
 /**
  * Things that stand together in a bracket, a group or an operand: points in order, and lines that are known by their Plücker
@@ -17,15 +18,27 @@ export const slotsOf = (figure: Figure): number => figure.points.length + 2 * fi
 export const pointFigure = (point: Ref): Figure => ({ points: [point], lines: [] });
 
 export class Geometry {
+  private readonly legs: (Ref | undefined)[] = [];
+  private readonly labelOfNode = new Map<number, number>();
+  /** Brackets by their four points in ascending order. */
+  private readonly brackets = new TupleTable();
+  private readonly bracketRefs: (Ref | undefined)[] = [];
+  private readonly four = new Int32Array(4);
   private readonly chiOfNode = new Map<number, Ref | null>();
 
   constructor(
     private readonly graph: Graph,
+    private readonly n: number,
     private readonly k: number,
   ) {}
 
   leg(label: number): Ref {
-    return this.graph.input(TWISTOR, label - 1, 4);
+    const known = this.legs[label];
+    if (known !== undefined) return known;
+    const leg = this.graph.input(TWISTOR, label - 1, 4);
+    this.legs[label] = leg;
+    this.labelOfNode.set(leg >> 1, label);
+    return leg;
   }
 
   loopPoint(index: number): Ref {
@@ -44,7 +57,7 @@ export class Geometry {
     return this.graph.input(BASIS, index, 4);
   }
 
-  /** <a b c d>: sorted with a sign, zero for a repeated point, from the two lines of the first and last two. */
+  /** <a b c d>: sorted with a sign, zero for a repeated point. */
   bracket(a: Ref, b: Ref, c: Ref, d: Ref): Ref {
     let sign = (a ^ b ^ c ^ d) & 1;
     let [p, q, r, s] = [a & ~1, b & ~1, c & ~1, d & ~1];
@@ -54,7 +67,37 @@ export class Geometry {
     if (q > s) [q, s, sign] = [s, q, sign ^ 1];
     if (q > r) [q, r, sign] = [r, q, sign ^ 1];
     if (p === q || q === r || r === s) return this.graph.zero;
-    return this.graph.bracket(this.graph.line(p, q), this.graph.line(r, s)) ^ sign;
+    this.four[0] = p;
+    this.four[1] = q;
+    this.four[2] = r;
+    this.four[3] = s;
+    const id = this.brackets.intern(this.four, 4);
+    let bracket = this.bracketRefs[id];
+    if (bracket === undefined) {
+      bracket = this.fromLines(p, q, r, s);
+      this.bracketRefs[id] = bracket;
+    }
+    return bracket ^ sign;
+  }
+
+  /** <p q r s> = (pq)(rs) = (ps)(qr) = -(pr)(qs): from the lines that are there, else from lines that others will want. */
+  private fromLines(p: Ref, q: Ref, r: Ref, s: Ref): Ref {
+    const { graph } = this;
+    const first = this.worth(p, q) + this.worth(r, s);
+    const second = this.worth(p, s) + this.worth(q, r);
+    const third = this.worth(p, r) + this.worth(q, s);
+    if (first >= second && first >= third) return graph.bracket(graph.line(p, q), graph.line(r, s));
+    if (second >= third) return graph.bracket(graph.line(p, s), graph.line(q, r));
+    return negated(graph.bracket(graph.line(p, r), graph.line(q, s)));
+  }
+
+  /** 2 for a line that is there, 1 for one of neighbouring legs. */
+  private worth(a: Ref, b: Ref): number {
+    if (this.graph.hasLine(a, b)) return 2;
+    const labels = [this.labelOfNode.get(a >> 1), this.labelOfNode.get(b >> 1)];
+    if (labels[0] === undefined || labels[1] === undefined) return 0;
+    const distance = Math.abs(labels[0] - labels[1]);
+    return distance === 1 || distance === this.n - 1 ? 1 : 0;
   }
 
   /** The bracket of things with four slots. */

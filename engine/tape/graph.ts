@@ -216,6 +216,14 @@ export class Graph {
     return a <= b ? this.node2(LINE, 0, a, b, 6) | sign : this.node2(LINE, 0, b, a, 6) | (sign ^ 1);
   }
 
+  /** Whether the line through two points is there already. */
+  hasLine(p: Ref, q: Ref): boolean {
+    this.tuple[0] = LINE;
+    this.tuple[1] = Math.min(p & ~1, q & ~1);
+    this.tuple[2] = Math.max(p & ~1, q & ~1);
+    return this.nodes.find(this.tuple, 3) >= 0;
+  }
+
   bracket(l: Ref, m: Ref): Ref {
     const sign = (l ^ m) & 1;
     return this.node2(BRACKET, 0, Math.min(l & ~1, m & ~1), Math.max(l & ~1, m & ~1), 1) | sign;

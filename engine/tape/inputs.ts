@@ -24,33 +24,36 @@ export interface TapeInput {
   readonly width: number;
 }
 
-/** The components of an input at a point. @throws Error when the point lacks what the form reads */
-export function readInput<T>(input: TapeInput, point: Point<T>, zero: T, one: T): readonly T[] {
-  const values = select(input, point, zero, one);
-  if (values === undefined || values.length !== input.width) {
-    throw new Error(
-      `readInput: expected ${input.width} components of ${describeInput(input)}, got ${values?.length ?? "none"}`,
-    );
+/**
+ * The components of an input at a point, in rows that follow each other: four flavours of a chi, else one row.
+ * @throws Error when the point lacks what the form reads
+ */
+export function readInput<T>(input: TapeInput, point: Point<T>, zero: T, one: T): readonly (readonly T[])[] {
+  const rows = select(input, point, zero, one);
+  let width = 0;
+  for (const row of rows) width += row?.length ?? 0;
+  if (width !== input.width) {
+    throw new Error(`readInput: expected ${input.width} components of ${describeInput(input)}, got ${width}`);
   }
-  return values;
+  return rows as readonly (readonly T[])[];
 }
 
-function select<T>({ kind, index }: TapeInput, point: Point<T>, zero: T, one: T): readonly T[] | undefined {
+function select<T>({ kind, index }: TapeInput, point: Point<T>, zero: T, one: T): readonly (readonly T[] | undefined)[] {
   switch (kind) {
     case TWISTOR:
-      return point.twistors[index];
+      return [point.twistors[index]];
     case LOOP_POINT:
-      return point.lines[index >> 1]?.[(index & 1) as 0 | 1];
+      return [point.lines[index >> 1]?.[(index & 1) as 0 | 1]];
     case REFERENCE_TWISTOR:
-      return point.referenceTwistor;
+      return [point.referenceTwistor];
     case REFERENCE_LINE_POINT:
-      return point.referenceLine[index as 0 | 1];
+      return [point.referenceLine[index as 0 | 1]];
     case CHI:
-      return point.chi[index]?.flat();
+      return point.chi[index] ?? [];
     case REFERENCE_CHI:
-      return point.referenceChi.flat();
+      return point.referenceChi;
     default:
-      return [0, 1, 2, 3].map((i) => (i === index ? one : zero));
+      return [[0, 1, 2, 3].map((i) => (i === index ? one : zero))];
   }
 }
 

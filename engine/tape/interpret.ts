@@ -33,7 +33,8 @@ export type Interpretation<T> =
 export function interpretTape<T>(tape: Tape, field: Field<T>, point: Point<T>): Interpretation<T> {
   const slots = new Array<T>(tape.slots).fill(field.zero);
   for (const input of tape.inputs) {
-    readInput(input, point, field.zero, field.one).forEach((x, i) => {
+    const components = readInput(input, point, field.zero, field.one).flat();
+    components.forEach((x, i) => {
       slots[input.slot + i] = x;
     });
   }

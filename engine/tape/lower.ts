@@ -61,7 +61,7 @@ export class Lowering {
     private readonly graph: Graph,
     private readonly form: FormToCompile,
   ) {
-    this.geometry = new Geometry(graph, form.k);
+    this.geometry = new Geometry(graph, form.n, form.k);
     this.exterior = new Exterior(graph, form.k);
     this.spinors = new Spinors(graph, this.geometry, form.n, form.squareSign);
     this.definitions = definitionsOf(form.formula);

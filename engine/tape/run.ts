@@ -35,7 +35,7 @@ export interface Progress {
 }
 
 /** The longest run of code between two stops, and the most terms in one: what buffers must hold. */
-function sliceExtent(tape: Tape): { words: number; terms: number } {
+export function sliceExtent(tape: Tape): { words: number; terms: number } {
   let [words, terms] = [0, 0];
   const termsAt = new Map<number, number>();
   for (const run of runsOf(tape.code)) if (run.code === TERM) termsAt.set(run.at - HEAD, run.count);
@@ -80,7 +80,7 @@ export function* runTape<T, P>(
 }
 
 /** One block of points in the kernel's memory. */
-class BlockRun<T, P> {
+export class BlockRun<T, P> {
   private readonly stride: number;
   private readonly at: Readonly<Record<"context" | "bad" | "sum" | "entry" | "exit" | "scratch" | "tables", number>> & {
     readonly code: number;
@@ -142,9 +142,10 @@ class BlockRun<T, P> {
       const offset = this.offset(lane);
       field.writeContext(view, at.context + 48 * Math.floor(lane / field.lanes), lane % field.lanes, parameter);
       for (const input of tape.inputs) {
-        readInput(input, point, field.zero, field.one).forEach((x, i) => {
-          field.write(view, at.slots + (input.slot + i) * stride + offset, x);
-        });
+        let address = at.slots + input.slot * stride + offset;
+        for (const row of readInput(input, point, field.zero, field.one)) {
+          for (let i = 0; i < row.length; i++, address += stride) field.write(view, address, row[i]!);
+        }
         given = Math.max(given, input.slot + input.width);
       }
       for (const { slot, numerator, denominator, span } of tape.constants) {

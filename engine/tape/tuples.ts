@@ -11,23 +11,35 @@ export class TupleTable {
   private slots = new Int32Array(FIRST_CAPACITY * 2).fill(-1);
   private mask = FIRST_CAPACITY * 2 - 1;
 
-  /** The number of the tuple words[0..length-1] of `tuple`; it equals the former `size` when the tuple is new. */
-  intern(tuple: ArrayLike<number>, length: number): number {
+  /** The number of a tuple, or -1 when it has not been met. */
+  find(tuple: ArrayLike<number>, length: number): number {
+    return this.slots[this.probe(tuple, length)]!;
+  }
+
+  /** The place in the hash table where a tuple is, or would be. */
+  private probe(tuple: ArrayLike<number>, length: number): number {
     let hash = length;
     for (let i = 0; i < length; i++) hash = Math.imul(hash ^ tuple[i]!, 0x9e3779b1) ^ (hash >>> 15);
     hash = Math.imul(hash ^ (hash >>> 16), 0x85ebca6b);
     let at = (hash ^ (hash >>> 13)) & this.mask;
     for (;;) {
       const id = this.slots[at]!;
-      if (id < 0) break;
+      if (id < 0) return at;
       const start = this.starts[id]!;
       if (this.starts[id + 1]! - start === length) {
         let i = 0;
         while (i < length && this.words[start + i] === tuple[i]) i++;
-        if (i === length) return id;
+        if (i === length) return at;
       }
       at = (at + 1) & this.mask;
     }
+  }
+
+  /** The number of the tuple words[0..length-1] of `tuple`; it equals the former `size` when the tuple is new. */
+  intern(tuple: ArrayLike<number>, length: number): number {
+    const at = this.probe(tuple, length);
+    const known = this.slots[at]!;
+    if (known >= 0) return known;
     const id = this.size;
     const start = this.starts[id]!;
     if (start + length > this.words.length) this.words = grown(this.words, start + length);
@@ -46,12 +58,8 @@ export class TupleTable {
     for (let id = 0; id < this.size; id++) {
       const start = this.starts[id]!;
       const end = this.starts[id + 1]!;
-      let hash = end - start;
-      for (let i = start; i < end; i++) hash = Math.imul(hash ^ this.words[i]!, 0x9e3779b1) ^ (hash >>> 15);
-      hash = Math.imul(hash ^ (hash >>> 16), 0x85ebca6b);
-      let at = (hash ^ (hash >>> 13)) & this.mask;
-      while (this.slots[at]! >= 0) at = (at + 1) & this.mask;
-      this.slots[at] = id;
+      // All tuples differ, so that a probe for one ends at a free place.
+      this.slots[this.probe(this.words.subarray(start, end), end - start)] = id;
     }
   }
 }
