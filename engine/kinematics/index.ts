@@ -1,5 +1,15 @@
-/** Kinematic points and what is measured on them: brackets, meets with their Grassmann parts, spinors, and maps of points. */
+/** Kinematic points and what is measured on them: brackets, meets with their Grassmann parts, spinors, momenta, and maps of points. */
+export { checkMomenta, fewestMomenta, nearSingular } from "./checkMomenta";
 export { determinant } from "./determinant";
+export {
+  balancedSpinors,
+  type LegSpinors,
+  momentaOfTwistors,
+  rationalSpinors,
+  spinorsOfTwistors,
+  twistorsOfMomenta,
+  twistorsOfSpinors,
+} from "./fromMomenta";
 export {
   bracket,
   type Line,
@@ -24,8 +34,24 @@ export {
   rotatePoint,
   transformPoint,
 } from "./maps";
+export {
+  addMomenta,
+  bispinorOf,
+  doubleSpacetime,
+  exactSpacetime,
+  type FourMomentum,
+  fourMomentumOf,
+  massSquared,
+  momentumTolerance,
+  type Signature,
+  type Spacetime,
+  signatures,
+} from "./momenta";
+export { flatMomenta, phaseSpaceVolume, scatteringPoint } from "./phaseSpace";
 export type { GrassmannVectors, Point, Twistor } from "./point";
-export { type PointUse, readPoints } from "./readPoints";
+export { rationalMomenta } from "./rationalMomenta";
+export { type MomentaDocument, readMomenta } from "./readMomenta";
+export { type PointUse, readComplexPoints, readPoints } from "./readPoints";
 export {
   angle,
   dualDistance,

@@ -1,9 +1,10 @@
 /** Points as JSON: what people hand to `value --points`. */
 import { z } from "zod";
-import { type Rational, rational, rationals } from "../fields";
+import { type Complex, type Field, gaussianRationals, type Rational, rationals } from "../fields";
 import { type Diagnostic, failure, type Result, success } from "../result";
 import type { AmplitudeSize } from "./makePoint";
-import type { Point } from "./point";
+import type { GrassmannVectors, Point, Twistor } from "./point";
+import { complexNumberSchema, fractionSchema } from "./readNumber";
 
 /** Which parts of a point are read. What is read must be there; what is not read may be left out. */
 export interface PointUse {
@@ -15,31 +16,33 @@ export interface PointUse {
   readonly referenceLine: boolean;
 }
 
-const LARGEST_NUMBER = 2_000;
-const NUMBER = /^([+-]?[0-9]+)(?:\/([+-]?[0-9]+))?$/;
+interface RawPoint<T> {
+  readonly twistors?: readonly Twistor<T>[] | undefined;
+  readonly chi?: readonly GrassmannVectors<T>[] | undefined;
+  readonly lines?: readonly (readonly [Twistor<T>, Twistor<T>])[] | undefined;
+  readonly referenceTwistor?: Twistor<T> | undefined;
+  readonly referenceChi?: GrassmannVectors<T> | undefined;
+  readonly referenceLine?: readonly [Twistor<T>, Twistor<T>] | undefined;
+}
 
-const numberSchema = z
-  .string({ error: 'expected a number as text, "p" or "p/q"' })
-  .max(LARGEST_NUMBER, `expected at most ${LARGEST_NUMBER} characters`)
-  .regex(NUMBER, 'expected "p" or "p/q" with integers p and q')
-  .refine((text) => !/\/[+-]?0+$/.test(text), "expected a denominator other than 0")
-  .transform((text): Rational => {
-    const [, p, q] = NUMBER.exec(text) ?? [];
-    return rational(BigInt(p!.replace("+", "")), q === undefined ? 1n : BigInt(q.replace("+", "")));
+/** The schema of a points document with coordinates of one kind. */
+function documentOf<T>(number: z.ZodType<T>): z.ZodType<{ readonly points: readonly RawPoint<T>[] }> {
+  const twistor = z.array(number).length(4, "expected 4 components");
+  const line = z.tuple([twistor, twistor], { error: "expected a pair of twistors" });
+  const chi = z.array(z.array(number)).length(4, "expected 4 flavours");
+  const point = z.strictObject({
+    twistors: z.array(twistor).optional(),
+    chi: z.array(chi).optional(),
+    lines: z.array(line).optional(),
+    referenceTwistor: twistor.optional(),
+    referenceChi: chi.optional(),
+    referenceLine: line.optional(),
   });
-const twistorSchema = z.array(numberSchema).length(4, "expected 4 components");
-const lineSchema = z.tuple([twistorSchema, twistorSchema], { error: "expected a pair of twistors" });
-const chiSchema = z.array(z.array(numberSchema)).length(4, "expected 4 flavours");
-const pointSchema = z.strictObject({
-  twistors: z.array(twistorSchema).optional(),
-  chi: z.array(chiSchema).optional(),
-  lines: z.array(lineSchema).optional(),
-  referenceTwistor: twistorSchema.optional(),
-  referenceChi: chiSchema.optional(),
-  referenceLine: lineSchema.optional(),
-});
-const documentSchema = z.strictObject({ points: z.array(pointSchema) });
-type RawPoint = z.output<typeof pointSchema>;
+  return z.strictObject({ points: z.array(point) });
+}
+
+const rationalDocument = documentOf(fractionSchema);
+const complexDocument = documentOf(complexNumberSchema);
 
 const HELP = 'a points document is {"points": [{"twistors": [["1", "0", "3/2", "5"], ...], ...}]}';
 
@@ -50,7 +53,12 @@ const place = (path: readonly PropertyKey[]): string =>
     .replace(/^\./, "");
 
 /** What is missing or of the wrong size in one point, as diagnostics. */
-function complaints(raw: RawPoint, index: number, { n, k, loops }: AmplitudeSize, use: PointUse): Diagnostic[] {
+function complaints(
+  raw: RawPoint<unknown>,
+  index: number,
+  { n, k, loops }: AmplitudeSize,
+  use: PointUse,
+): Diagnostic[] {
   const found: Diagnostic[] = [];
   const complain = (code: string, message: string, help: string): void => {
     found.push({ code, message: `points[${index}]: ${message}`, help });
@@ -82,10 +90,9 @@ function complaints(raw: RawPoint, index: number, { n, k, loops }: AmplitudeSize
 }
 
 /** A whole point; parts that the form does not read are zero where they were left out or have another size. */
-function complete(raw: RawPoint, { n, k, loops }: AmplitudeSize, use: PointUse): Point<Rational> {
-  const zero = rationals.zero;
+function complete<T>({ zero }: Field<T>, raw: RawPoint<T>, { n, k, loops }: AmplitudeSize, use: PointUse): Point<T> {
   const zeros = [zero, zero, zero, zero];
-  const noChi = [0, 1, 2, 3].map(() => new Array<Rational>(k).fill(zero));
+  const noChi = [0, 1, 2, 3].map(() => new Array<T>(k).fill(zero));
   return {
     n,
     k,
@@ -101,12 +108,14 @@ function complete(raw: RawPoint, { n, k, loops }: AmplitudeSize, use: PointUse):
 
 const MOST_DIAGNOSTICS = 100;
 
-/**
- * Reads a points document, exact rationals, for a form of the given size that reads the given parts.
- * Faults: `points-shape` (structure or a malformed number), `points-missing`, `points-count`, each with its place and what to do.
- */
-export function readPoints(json: unknown, size: AmplitudeSize, use: PointUse): Result<readonly Point<Rational>[]> {
-  const parsed = documentSchema.safeParse(json);
+function read<T>(
+  field: Field<T>,
+  document: z.ZodType<{ readonly points: readonly RawPoint<T>[] }>,
+  json: unknown,
+  size: AmplitudeSize,
+  use: PointUse,
+): Result<readonly Point<T>[]> {
+  const parsed = document.safeParse(json);
   if (!parsed.success) {
     const issues = parsed.error.issues.slice(0, MOST_DIAGNOSTICS);
     return failure(
@@ -119,5 +128,19 @@ export function readPoints(json: unknown, size: AmplitudeSize, use: PointUse): R
   }
   const found = parsed.data.points.flatMap((raw, index) => complaints(raw, index, size, use));
   if (found.length > 0) return failure(...found.slice(0, MOST_DIAGNOSTICS));
-  return success(parsed.data.points.map((raw) => complete(raw, size, use)));
+  return success(parsed.data.points.map((raw) => complete(field, raw, size, use)));
 }
+
+/**
+ * Reads a points document, exact rationals, for a form of the given size that reads the given parts.
+ * Faults: `points-shape` (structure or a malformed number), `points-missing`, `points-count`, each with its place and what to do.
+ */
+export const readPoints = (json: unknown, size: AmplitudeSize, use: PointUse): Result<readonly Point<Rational>[]> =>
+  read(rationals, rationalDocument, json, size, use);
+
+/** The same where each coordinate is a number ("p", "p/q", a decimal) or a pair ["re", "im"] of these. */
+export const readComplexPoints = (
+  json: unknown,
+  size: AmplitudeSize,
+  use: PointUse,
+): Result<readonly Point<Complex<Rational>>[]> => read(gaussianRationals, complexDocument, json, size, use);
