@@ -2,10 +2,10 @@
 import { z } from "zod";
 import { type Diagnostic, failure, type Result, success } from "../result";
 import type { Code } from "./codes";
-import { fewestLegs, mostLegs, mostLoops, mostSourceUnits } from "./limits";
+import { fewestLegs, mostDiagnostics, mostLegs, mostLoops, mostSourceUnits } from "./limits";
 import { read } from "./parse";
 import type { Formula } from "./tree";
-import { validate } from "./validate";
+import { validate, validatePlaces } from "./validate";
 
 const longestTitle = 300;
 const longestNote = 20_000;
@@ -97,6 +97,8 @@ export function readEntry(source: string): Result<Form> {
 
 /** Reads a document from a JSON value. Spans of faults in the formula are places in `notation`. */
 export function readEntryValue(value: unknown): Result<Form> {
+  const spoiled = spoiledField(value, "");
+  if (spoiled !== null) return failure(spoiled);
   const parsed = entryDocumentSchema.safeParse(value);
   if (!parsed.success) return failure(...parsed.error.issues.slice(0, 50).map(fieldFault));
   const document = parsed.data;
@@ -106,7 +108,11 @@ export function readEntryValue(value: unknown): Result<Form> {
   const component = readComponent(document.component, range, k);
   const faults = [...amplitudeFaults(range, smallest, k), ...component.faults];
   const { formula, diagnostics } = read(document.notation);
-  if (faults.length > 0 || formula === null || diagnostics.length > 0) return failure(...faults, ...diagnostics);
+  if (formula === null || faults.length > 0) return failure(...faults, ...diagnostics);
+  if (diagnostics.length > 0) {
+    const places = validatePlaces(formula, { n: [smallest], loops });
+    return failure(...inOrder([...diagnostics, ...places]).slice(0, mostDiagnostics + 1));
+  }
   const form: Form = {
     amplitude: { n: range, k, loops },
     component: component.legs,
@@ -157,6 +163,26 @@ export function sizesOf(form: Form, largest: number): readonly number[] {
   if (typeof n === "number") return [n];
   const last = n.to ?? Math.min(mostLegs, Math.max(largest, n.from + 3));
   return Array.from({ length: last - n.from + 1 }, (_, i) => n.from + i);
+}
+
+/** Diagnostics in the order of their places in the text. */
+const inOrder = (diagnostics: readonly Diagnostic[]): Diagnostic[] =>
+  [...diagnostics].sort((a, b) => (a.span?.[0] ?? 0) - (b.span?.[0] ?? 0));
+
+/** The first text outside the notation that holds half a surrogate pair or a NUL, which databases and files do not keep. */
+function spoiledField(value: unknown, path: string): Diagnostic | null {
+  if (typeof value === "string") {
+    if (path === "notation" || !/\p{Surrogate}|\0/u.test(value)) return null;
+    return fault("json-text", `${path} holds half a surrogate pair or a NUL character.`, "Delete the character.");
+  }
+  if (typeof value !== "object" || value === null) return null;
+  const depth = path.split(".").length;
+  if (depth > 4) return null;
+  for (const [name, member] of Object.entries(value)) {
+    const found = spoiledField(member, path === "" ? name : `${path}.${name}`);
+    if (found !== null) return found;
+  }
+  return null;
 }
 
 function amplitudeFaults(range: Form["amplitude"]["n"], smallest: number, k: number): Diagnostic[] {

@@ -18,5 +18,6 @@ export {
 } from "./entry";
 export { expandTerms } from "./expand";
 export { type ParseOptions, parse, type Reading, read } from "./parse";
+export { printExpression, printFormula, printItem } from "./print";
 export type * from "./tree";
 export { type ValidationContext, validate, validatePlaces } from "./validate";
