@@ -97,6 +97,7 @@ export function unreadable(diagnostics: readonly Diagnostic[]): Report {
   return {
     verdict: "unreadable",
     comparisons: [],
+    leftOut: [],
     marks: {},
     poles: [],
     diagnosis: [],
@@ -173,6 +174,7 @@ function reportOf(form: Form, digest: string, results: readonly SizeResult[], sh
     range: results.map((r) => r.n),
     evaluator: evaluatorName,
     comparisons,
+    leftOut: results.flatMap((r) => r.leftOut.map((l) => (ranged ? { ...l, n: r.n } : l))),
     marks: marksOf(results, shown),
     poles: [...shown.poles],
     diagnosis: [...diagnosis],

@@ -52,6 +52,15 @@ export const comparisonSchema = z.strictObject({
   n: z.int().optional(),
   /** Publication of a source. */
   reference: z.string().optional(),
+  /** Method of a source: two sources of one lineage are not independent of each other. */
+  lineage: z.string().optional(),
+});
+
+export const leftOutSchema = z.strictObject({
+  with: z.string(),
+  n: z.int().optional(),
+  /** Too many operations for the budget, or too large an expression for any number of points to reach the bound. */
+  reason: z.enum(["budget", "bound"]),
 });
 
 export const markSchema = z.strictObject({
@@ -124,6 +133,8 @@ export const reportSchema = z.strictObject({
   range: z.array(z.int()).optional(),
   evaluator: z.string().optional(),
   comparisons: z.array(comparisonSchema),
+  /** Comparisons that apply and were not made. */
+  leftOut: z.array(leftOutSchema),
   marks: z.partialRecord(markCodeSchema, markSchema),
   poles: z.array(poleSchema),
   diagnosis: z.array(diagnosisSchema),
@@ -138,6 +149,7 @@ export type Verdict = z.infer<typeof verdictSchema>;
 export type Target = z.infer<typeof targetSchema>;
 export type Mark = z.infer<typeof markSchema>;
 export type Comparison = z.infer<typeof comparisonSchema>;
+export type LeftOut = z.infer<typeof leftOutSchema>;
 export type Pole = z.infer<typeof poleSchema>;
 export type Diagnosis = z.infer<typeof diagnosisSchema>;
 export type Report = z.infer<typeof reportSchema>;

@@ -3,14 +3,14 @@ import type { Span } from "../result";
 import type { Value } from "./bench";
 import { drawSample } from "./draws";
 import type { PreparedForm, Sample } from "./evaluator";
-import type { Comparand } from "./truth";
+import type { Chosen } from "./truth";
 
 export interface Sampled {
   readonly samples: readonly Sample[];
   /** The number of each sample in the stream of draws: numbers left out were bad points. */
   readonly draws: readonly number[];
   readonly values: readonly Value[];
-  /** Values of each comparand at the samples. */
+  /** Values of each comparand at the first samples, as many as it needs. */
   readonly truths: readonly (readonly number[])[];
 }
 
@@ -30,7 +30,7 @@ const drawsBeforeGivingUp = 8;
 export function drawSamples(
   seed: string,
   prepared: PreparedForm,
-  comparands: readonly Comparand[],
+  chosen: readonly Chosen[],
   count: number,
   onProgress: (done: number) => void = () => {},
 ): Sampled | VanishingDenominator {
@@ -38,7 +38,7 @@ export function drawSamples(
     samples: [] as Sample[],
     draws: [] as number[],
     values: [] as Value[],
-    truths: comparands.map(() => [] as number[]),
+    truths: chosen.map(() => [] as number[]),
   };
   let badForTruth = 0;
   for (let draw = 0; kept.samples.length < count; draw++) {
@@ -50,11 +50,12 @@ export function drawSamples(
       if (draw > 4 * count + 4 * drawsBeforeGivingUp) return { span: outcome.span };
       continue;
     }
-    const truths = comparands.map((c) => c.evaluate([sample])[0] ?? null);
+    const asked = chosen.filter((c) => c.samples > kept.samples.length);
+    const truths = asked.map((c) => c.comparand.evaluate([sample])[0] ?? null);
     if (truths.includes(null)) {
       badForTruth += 1;
       if (badForTruth > 2 * count + drawsBeforeGivingUp) {
-        const name = comparands[truths.indexOf(null)]?.name;
+        const name = asked[truths.indexOf(null)]?.comparand.name;
         throw new Error(`drawSamples: ${name} has no value at ${badForTruth} random points`);
       }
       continue;
@@ -62,8 +63,9 @@ export function drawSamples(
     kept.samples.push(sample);
     kept.draws.push(draw);
     kept.values.push(outcome);
-    truths.forEach((value, i) => {
-      if (value !== null) kept.truths[i]?.push(value);
+    asked.forEach((c, i) => {
+      const value = truths[i];
+      if (value !== null && value !== undefined) kept.truths[chosen.indexOf(c)]?.push(value);
     });
     onProgress(kept.samples.length);
   }

@@ -4,16 +4,16 @@ import { sizeBound } from "../evaluate/size";
 import { countTerms } from "../notation/count";
 import { mostTerms } from "../notation/limits";
 import type { Span } from "../result";
-import { answering, type Question, type SizeBound, type Source } from "../sources";
+import type { Question } from "../sources";
 import type { Bench } from "./bench";
 import { boundText, fewestSamples, missProbability, samplesNeeded } from "./bound";
 import { type DiagnosisCase, diagnose, drawProbes } from "./diagnosis";
-import { type PreparedForm, prepare } from "./evaluator";
+import { prepare } from "./evaluator";
 import { markChecks } from "./marks";
 import { findPoles } from "./poles";
-import type { Comparison, Diagnosis, Mark, MarkCode, Pole, Target } from "./report";
+import type { Comparison, Diagnosis, LeftOut, Mark, MarkCode, Pole, Target } from "./report";
 import { drawSamples, type Sampled } from "./sampling";
-import { type Comparand, fromForm, fromSource } from "./truth";
+import { type Chosen, type Comparand, cheapestTruth, chooseTruths } from "./truth";
 import { checkWeights } from "./weights";
 
 /** What was found at one n. */
@@ -22,6 +22,7 @@ export interface SizeResult {
   readonly verdict: "agrees" | "disagrees" | "undecided";
   readonly reason?: "nothing-to-compare" | "budget" | "bound";
   readonly comparisons: readonly Comparison[];
+  readonly leftOut: readonly Omit<LeftOut, "n">[];
   readonly marks: Partial<Record<MarkCode, Mark>>;
   readonly poles: readonly Pole[];
   readonly diagnosis: readonly Diagnosis[];
@@ -56,7 +57,6 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
   options.step("weights");
   const weights = checkWeights(form, target);
   const question: Question = { n: form.n, k: form.k, loops: form.loops, negativeLegs: form.negativeLegs, target };
-  const truthOf = (q: Question): Comparand | null => cheapest(answering(q), q);
   const budget = { left: options.budget };
   const diagnosing = (bench: Bench | null, truths: readonly Comparand[]): readonly Diagnosis[] => {
     options.step("diagnosis");
@@ -66,7 +66,17 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
       budget.left -= operations;
       return budget.left >= 0;
     };
-    const found: DiagnosisCase = { seed, form, question, weights, bench, truths, probes, truthOf, spend };
+    const found: DiagnosisCase = {
+      seed,
+      form,
+      question,
+      weights,
+      bench,
+      truths,
+      probes,
+      truthOf: cheapestTruth,
+      spend,
+    };
     return diagnose(found);
   };
 
@@ -77,14 +87,14 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
   const poles = findPoles(form);
   const prepared = prepare(form);
   const size = sizeBound(form);
-  const truths = chosenTruths(question, options, size, prepared, budget);
-  const miss = truths.comparands.map((c) => missProbability(size, c.size));
   const own = missProbability(size, size);
-  const needed = miss.map(samplesNeeded);
-  const count = Math.max(fewestSamples, ...needed.map((m) => m ?? fewestSamples), samplesNeeded(own) ?? fewestSamples);
+  const { chosen, leftOut, cost } = chooseTruths(question, size, options.accepted, budget.left, options.sources);
+  budget.left -= cost;
+  const comparands = chosen.map((c) => c.comparand);
+  const samples = Math.max(samplesNeeded(own) ?? fewestSamples, ...chosen.map((c) => c.samples));
 
   options.step("values");
-  const sampled = drawSamples(seed, prepared, truths.comparands, count);
+  const sampled = drawSamples(seed, prepared, chosen, samples);
   if ("span" in sampled) return { vanishing: sampled.span };
   const bench: Bench = {
     seed,
@@ -96,7 +106,7 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
     poles,
     miss: own,
   };
-  const comparisons = truths.comparands.map((c, i) => compare(form.n, c, sampled, i, miss[i] ?? 1));
+  const comparisons = chosen.map((c, i) => compare(form.n, c, sampled, sampled.truths[i] ?? []));
   const disagrees = comparisons.some((c) => !c.agrees);
 
   const marks: Partial<Record<MarkCode, Mark>> = {};
@@ -105,26 +115,25 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
     marks[check.code] = check.run(bench);
   }
   const broken = markChecks.filter((check) => check.constraint && marks[check.code]?.state === "fails");
-  const uncertain = needed.includes(null);
   const verdict =
     disagrees || broken.length > 0 || weights.faults.length > 0
       ? "disagrees"
-      : comparisons.length === 0 || uncertain
+      : comparisons.length === 0
         ? "undecided"
         : "agrees";
-  const reason =
-    verdict !== "undecided" ? undefined : uncertain ? "bound" : truths.leftOut > 0 ? "budget" : "nothing-to-compare";
+  const reason = verdict === "undecided" ? (leftOut[0]?.reason ?? "nothing-to-compare") : undefined;
   return {
     n: form.n,
     verdict,
     ...(reason === undefined ? {} : { reason }),
     comparisons,
+    leftOut,
     marks,
     poles,
-    diagnosis: verdict === "disagrees" ? diagnosing(bench, truths.comparands) : [],
+    diagnosis: verdict === "disagrees" ? diagnosing(bench, comparands) : [],
     terms: sampled.values[0]?.terms.length ?? 0,
     operations: prepared.operations,
-    evidence: evidenceOf(form.n, truths.comparands, sampled),
+    evidence: evidenceOf(form.n, chosen, sampled),
   };
 }
 
@@ -134,6 +143,7 @@ function withoutValue(form: FormAtN, diagnosis: readonly Diagnosis[]): SizeResul
     n: form.n,
     verdict: "disagrees",
     comparisons: [],
+    leftOut: [],
     marks: {},
     poles: findPoles(form),
     diagnosis,
@@ -143,52 +153,23 @@ function withoutValue(form: FormAtN, diagnosis: readonly Diagnosis[]): SizeResul
   };
 }
 
-/** Sources and accepted forms, the cheapest first, as many as the budget allows. */
-function chosenTruths(
-  question: Question,
-  options: SizeOptions,
-  size: SizeBound,
-  prepared: PreparedForm,
-  budget: { left: number },
-): { readonly comparands: readonly Comparand[]; readonly leftOut: number } {
-  const known = answering(question).filter((s) => options.sources === undefined || options.sources.includes(s.name));
-  const all = [
-    ...known.map((s) => fromSource(s, question)).sort((a, b) => a.cost - b.cost),
-    ...options.accepted.map(({ name, form }) => fromForm(name, form)),
-  ];
-  const comparands: Comparand[] = [];
-  for (const c of all) {
-    const samples = samplesNeeded(missProbability(size, c.size)) ?? fewestSamples;
-    const cost = samples * (c.cost + (comparands.length === 0 ? prepared.operations : 0));
-    if (cost > budget.left) continue;
-    budget.left -= cost;
-    comparands.push(c);
-  }
-  return { comparands, leftOut: all.length - comparands.length };
-}
-
-function cheapest(known: readonly Source[], question: Question): Comparand | null {
-  const [first] = known.map((s) => fromSource(s, question)).sort((a, b) => a.cost - b.cost);
-  return first ?? null;
-}
-
-function compare(n: number, comparand: Comparand, sampled: Sampled, index: number, miss: number): Comparison {
-  const truths = sampled.truths[index] ?? [];
-  const agrees = sampled.values.every((value, i) => value.sum === truths[i]);
-  const primes = new Set(sampled.samples.map((s) => s.prime)).size;
+function compare(n: number, { comparand, miss }: Chosen, sampled: Sampled, truths: readonly number[]): Comparison {
+  const agrees = truths.every((truth, i) => sampled.values[i]?.sum === truth);
+  const primes = new Set(sampled.samples.slice(0, truths.length).map((s) => s.prime)).size;
   return {
     with: comparand.name,
     kind: comparand.kind,
     agrees,
-    points: sampled.samples.length,
+    points: truths.length,
     primes,
     n,
-    ...(agrees ? { bound: boundText(miss, sampled.samples.length) } : {}),
+    ...(agrees ? { bound: boundText(miss, truths.length) } : {}),
     ...(comparand.reference === undefined ? {} : { reference: comparand.reference }),
+    ...(comparand.lineage === undefined ? {} : { lineage: comparand.lineage }),
   };
 }
 
-function evidenceOf(n: number, comparands: readonly Comparand[], sampled: Sampled): SizeEvidence {
+function evidenceOf(n: number, chosen: readonly Chosen[], sampled: Sampled): SizeEvidence {
   return {
     n,
     samples: sampled.samples.map(({ prime }, i) => ({
@@ -196,6 +177,6 @@ function evidenceOf(n: number, comparands: readonly Comparand[], sampled: Sample
       prime,
       value: sampled.values[i]?.sum ?? 0,
     })),
-    truths: comparands.map((c, i) => ({ with: c.name, values: sampled.truths[i] ?? [] })),
+    truths: chosen.map(({ comparand }, i) => ({ with: comparand.name, values: sampled.truths[i] ?? [] })),
   };
 }
