@@ -1,8 +1,17 @@
-/** The engine's public face: read a form, check it, certify and replay the check, derive and export forms. Pure: no input or output. */
+/** The engine's public face: read a form, check it, certify and replay the check, evaluate, derive and export forms. Pure: no input or output. */
+export {
+  type Certificate,
+  certificateSchema,
+  certify,
+  checkWithCertificate,
+  type Difference,
+  replay,
+} from "./certificate";
 export {
   type AcceptedForm,
   CheckCancelled,
   type CheckOptions,
+  type CheckRecord,
   checkForm,
   defaultBudget,
   engineVersion,
@@ -12,8 +21,23 @@ export {
   unreadable,
 } from "./checks";
 export * from "./checks/report";
-export { type Certificate, certificateSchema, checkWithCertificate, replay } from "./certificate";
-export { derive } from "./derive";
+export { type DeriveRequest, derive, deriveMethods } from "./derive";
+export { evaluateForm } from "./evaluate";
+export { fingerprint } from "./evaluate/fingerprint";
+export { type FormAtN, formAt, pointUse } from "./evaluate/form";
 export { exporters } from "./export";
-export { amplitudeKey, digestOf, type EntryDocument, entrySchema, type Form, readEntry, readEntryValue } from "./notation";
-export type { Diagnostic, Result, Span } from "./result";
+export { type Field, fromRational, MERSENNE_61, primeField, randomness, rationals } from "./fields";
+export { mapPoint, type Point, randomPoint, readPoints } from "./kinematics";
+export {
+  amplitudeKey,
+  canonicalJson,
+  digestOf,
+  type EntryDocument,
+  entrySchema,
+  type Form,
+  printFormula,
+  readEntry,
+  readEntryValue,
+  sizesOf,
+} from "./notation";
+export { type Diagnostic, failure, type Result, type Span, success } from "./result";

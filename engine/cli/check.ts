@@ -1,11 +1,16 @@
 /** `check`: the whole check of entry documents. */
 import { readdir } from "node:fs/promises";
 import { join } from "node:path";
-import { certify } from "../certificate";
-import { type AcceptedForm, checkForm, unreadable } from "../checks";
-import type { Report } from "../checks/report";
-import { canonicalJson, readEntry } from "../notation";
-import type { Diagnostic } from "../result";
+import {
+  type AcceptedForm,
+  canonicalJson,
+  certify,
+  checkForm,
+  type Diagnostic,
+  type Report,
+  readEntry,
+  unreadable,
+} from "../index";
 import type { Call, Command, Exit } from "./command";
 import { fileFault, readText, writeText } from "./files";
 import { diagnosticsText, printJson, reportText } from "./print";

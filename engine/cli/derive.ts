@@ -1,6 +1,5 @@
 /** `derive`: writes a form by a published method, as an entry document. */
-import { derive as deriveForm, deriveMethods } from "../derive";
-import { printFormula } from "../notation";
+import { derive as deriveForm, deriveMethods, printFormula } from "../index";
 import { type Call, type Command, type Exit, integerOption, Usage } from "./command";
 import { diagnosticsText, printJson } from "./print";
 

@@ -1,7 +1,5 @@
 /** `digest`: the identity of an entry document's content, and its fingerprint. */
-import { fingerprint } from "../evaluate/fingerprint";
-import { formAt } from "../evaluate/form";
-import { amplitudeKey, digestOf, readEntry, sizesOf } from "../notation";
+import { amplitudeKey, digestOf, fingerprint, formAt, readEntry, sizesOf } from "../index";
 import type { Call, Command, Exit } from "./command";
 import { readText } from "./files";
 import { diagnosticsText, printJson } from "./print";

@@ -1,6 +1,5 @@
 /** `export`: a form in another language. */
-import { exporters } from "../export";
-import { readEntry } from "../notation";
+import { exporters, readEntry } from "../index";
 import { type Call, type Command, type Exit, Usage } from "./command";
 import { readText } from "./files";
 import { diagnosticsText, printJson } from "./print";

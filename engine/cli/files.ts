@@ -1,7 +1,6 @@
 /** Reading and writing of files for the commands. */
 import { readFile, stat, writeFile } from "node:fs/promises";
-import type { Diagnostic, Result } from "../result";
-import { failure, success } from "../result";
+import { type Diagnostic, failure, type Result, success } from "../index";
 import type { Io } from "./command";
 
 /** Larger files are refused before they are read. */

@@ -1,6 +1,5 @@
 /** How results look on a terminal. */
-import type { Report } from "../checks/report";
-import type { Diagnostic } from "../result";
+import type { Diagnostic, Report } from "../index";
 import type { Call } from "./command";
 
 export function printJson(call: Call, value: unknown): void {

@@ -1,5 +1,5 @@
 /** `replay`: repeats a check from its certificate, without the server. */
-import { replay as replayCertificate } from "../certificate";
+import { replay as replayCertificate } from "../index";
 import type { Call, Command, Exit } from "./command";
 import { readText } from "./files";
 import { diagnosticsText, printJson } from "./print";
