@@ -17,6 +17,7 @@ export {
   sizesOf,
 } from "./entry";
 export { expandTerms } from "./expand";
+export { latexExpression, latexLines } from "./latex";
 export { type ParseOptions, parse, type Reading, read } from "./parse";
 export { printExpression, printFormula, printItem } from "./print";
 export type * from "./tree";
