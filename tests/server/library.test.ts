@@ -8,6 +8,7 @@ import {
   getTriangle,
   listForms,
   localUser,
+  type Principal,
   startCheck,
   submitForm,
 } from "../../app/_server";
@@ -18,7 +19,7 @@ import { seedProgress, submitSeeds } from "../../app/_server/library";
 import { migrateDatabase, onEachDatabase } from "./support/databases";
 import { entry, report } from "./support/examples";
 
-const stranger = { userId: "stranger", groups: [] };
+const stranger: Principal = { userId: "stranger", groups: [] };
 
 async function finishAll(verdict: Parameters<typeof report>[0] = "agrees"): Promise<void> {
   for (let job = await claimNext(20_000); job; job = await claimNext(20_000))
@@ -31,7 +32,7 @@ async function submit(variant = 0, more: Record<string, unknown> = {}, idempoten
   return result.value;
 }
 
-const idsOf = async (principal: typeof stranger, query: Parameters<typeof listForms>[1]) => {
+const idsOf = async (principal: Principal, query: Parameters<typeof listForms>[1]) => {
   const list = await listForms(principal, query);
   if (!list.ok) throw new Error(list.problem.detail);
   return list.value.items.map((item) => item.id);

@@ -92,6 +92,7 @@ async function giveUp(claim: Claim, why: string): Promise<"given-up" | "late"> {
   const report: Report = {
     verdict: "undecided",
     comparisons: [],
+    leftOut: [],
     marks: {},
     poles: [],
     diagnosis: [],

@@ -18,8 +18,12 @@ export interface SlotOptions {
   readonly grace: number;
 }
 
+type ThreadEvent = ThreadMessage | { readonly kind: "ended"; readonly message: string };
+
 export class Slot {
   #thread: Worker | undefined;
+  /** Takes what the thread says about the check that is running; null between checks. */
+  #listener: ((event: ThreadEvent) => void) | null = null;
   readonly #options: SlotOptions;
 
   constructor(options: SlotOptions) {
@@ -33,50 +37,51 @@ export class Slot {
     signal: AbortSignal,
   ): Promise<RunResult> {
     return new Promise((resolve) => {
-      const thread = this.#thread ?? this.#start();
+      if (signal.aborted) {
+        resolve({ kind: "stopped", why: "asked" });
+        return;
+      }
       const stop = new SharedArrayBuffer(4);
       const timers: NodeJS.Timeout[] = [];
+      let halted: "asked" | "time" | null = null;
       const settle = (result: RunResult): void => {
         for (const timer of timers) clearTimeout(timer);
         signal.removeEventListener("abort", onAbort);
-        thread.removeAllListeners();
+        this.#listener = null;
         resolve(result);
       };
-      const abandon = (result: RunResult): void => {
-        this.#thread = undefined;
-        settle(result);
-        void thread.terminate();
-      };
       const halt = (why: "asked" | "time"): void => {
+        if (halted !== null) return;
+        halted = why;
         Atomics.store(new Int32Array(stop), 0, 1);
-        timers.push(setTimeout(() => abandon({ kind: "stopped", why }), this.#options.grace));
-        // What it still says after this is not a result, however complete it looks.
-        thread.removeAllListeners("message");
-        thread.on("message", (message: ThreadMessage) => {
-          if (message.kind !== "progress") settle({ kind: "stopped", why });
-        });
+        const end = (): void => {
+          void this.close();
+          settle({ kind: "stopped", why });
+        };
+        timers.push(setTimeout(end, this.#options.grace));
       };
       const onAbort = (): void => halt("asked");
-      thread.on("message", (message: ThreadMessage) => {
-        if (message.kind === "progress") onProgress(message);
-        else settle(message);
-      });
-      thread.on("error", (error) => abandon({ kind: "failed", message: error.message }));
-      thread.on("exit", () => abandon({ kind: "failed", message: "the thread ended" }));
-      timers.push(setTimeout(() => halt("time"), this.#options.time));
-      if (signal.aborted) {
-        settle({ kind: "stopped", why: "asked" });
-        return;
-      }
+      this.#listener = (event) => {
+        if (event.kind === "progress") {
+          if (halted === null) onProgress(event);
+          return;
+        }
+        // What it still says after it was told to stop is not a result, however complete it looks.
+        if (halted !== null) settle({ kind: "stopped", why: halted });
+        else if (event.kind === "ended") settle({ kind: "failed", message: event.message });
+        else settle(event);
+      };
       signal.addEventListener("abort", onAbort);
-      thread.postMessage({ ...task, stop } satisfies CheckTask);
+      timers.push(setTimeout(() => halt("time"), this.#options.time));
+      this.#thread ??= this.#start();
+      this.#thread.postMessage({ ...task, stop } satisfies CheckTask);
     });
   }
 
+  /** Ends the thread; the next check gets a new one. */
   async close(): Promise<void> {
     const thread = this.#thread;
     this.#thread = undefined;
-    thread?.removeAllListeners();
     await thread?.terminate();
   }
 
@@ -84,7 +89,18 @@ export class Slot {
     const thread = new Worker(this.#options.program, {
       resourceLimits: { maxOldGenerationSizeMb: this.#options.memory },
     });
-    this.#thread = thread;
+    // A thread that was replaced may still end; only the present one is listened to.
+    const tell = (event: ThreadEvent): void => {
+      if (this.#thread === thread) this.#listener?.(event);
+    };
+    const gone = (message: string): void => {
+      if (this.#thread !== thread) return;
+      this.#thread = undefined;
+      this.#listener?.({ kind: "ended", message });
+    };
+    thread.on("message", tell);
+    thread.on("error", (error) => gone(error.message));
+    thread.on("exit", () => gone("the thread ended"));
     return thread;
   }
 }

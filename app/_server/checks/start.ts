@@ -43,6 +43,7 @@ async function endUnreadable(transaction: Transaction, id: string, faults: reado
   const report: Report = {
     verdict: "unreadable",
     comparisons: [],
+    leftOut: [],
     marks: {},
     poles: [],
     diagnosis: [],

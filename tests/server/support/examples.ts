@@ -25,6 +25,7 @@ export const report = (verdict: Verdict = "agrees", more: Partial<Report> = {}):
       bound: "2^-180",
     },
   ],
+  leftOut: [],
   marks: { cyclic: { state: "holds", manifest: false, evidence: "The value is the same after a rotation." } },
   poles: [{ bracket: "<1 2 3 5>", kind: "spurious", reference: false, terms: [0, 1] }],
   diagnosis: [],
