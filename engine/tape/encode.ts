@@ -64,6 +64,8 @@ class Encoder {
   private runKind = -1;
   private entries = 0;
   private readonly waiting: number[] = [];
+  /** The inversions of the batch at hand: it must not hold an inverse of one of its own. */
+  private readonly batch = new Set<number>();
 
   constructor(
     private readonly graph: Graph,
@@ -160,7 +162,9 @@ class Encoder {
     const [start, end] = [starts[node]!, starts[node + 1]!];
     const operation = words[start]! & 255;
     const parameter = words[start]! >> 8;
+    if (operation === INVERT && this.batch.has(words[start + 1]! >> 1)) this.closeRun();
     this.beginEntry(operation, parameter);
+    if (operation === INVERT) this.batch.add(node);
     const width = graph.width(node);
     const out = this.slots.take(width);
     this.slotOf[node] = out;
@@ -203,7 +207,7 @@ class Encoder {
     const kind = operation | ((plain ? 0 : parameter) << 8);
     const full = operation === INVERT && this.head >= 0 && this.code.words[this.head + 1]! === BATCH;
     if (kind !== this.runKind || full) {
-      this.closeRun();
+      if (this.head >= 0) this.closeRun();
       this.head = this.code.length;
       this.runKind = kind;
       for (const word of [operation, 0, plain ? 0 : parameter, 0]) this.code.push(word);
@@ -215,6 +219,7 @@ class Encoder {
   private closeRun(): void {
     this.head = -1;
     this.runKind = -1;
+    this.batch.clear();
     this.giveWaiting();
   }
 

@@ -38,7 +38,12 @@ export function readInput<T>(input: TapeInput, point: Point<T>, zero: T, one: T)
   return rows as readonly (readonly T[])[];
 }
 
-function select<T>({ kind, index }: TapeInput, point: Point<T>, zero: T, one: T): readonly (readonly T[] | undefined)[] {
+function select<T>(
+  { kind, index }: TapeInput,
+  point: Point<T>,
+  zero: T,
+  one: T,
+): readonly (readonly T[] | undefined)[] {
   switch (kind) {
     case TWISTOR:
       return [point.twistors[index]];

@@ -40,6 +40,8 @@ export function isFresh(name) {
 /** Builds build/NAME.mjs if it is older than its sources. Written under another name first, so that a running command never reads half a file. */
 export async function bundle(name) {
   if (isFresh(name)) return;
+  const { ensureKernel } = await import("../../../engine/tape/kernel/build.mjs");
+  await ensureKernel();
   const started = new Date();
   const { build } = await import("esbuild");
   mkdirSync(join(root, "build"), { recursive: true });

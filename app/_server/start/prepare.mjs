@@ -77,6 +77,7 @@ export async function prepareCode(programs) {
   checkNode();
   install();
   exclusively("generate", () => step("database clients", ["prisma/generate.mjs"], true));
+  exclusively("kernel", () => step("kernel", ["engine/tape/kernel/build.mjs"], true));
   const { bundle } = await import("./bundle.mjs");
   for (const name of programs) await bundle(name);
 }
