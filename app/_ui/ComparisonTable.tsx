@@ -1,4 +1,4 @@
-import type { Comparison } from "../../engine/checks/report";
+import type { Comparison, LeftOut } from "../../engine/checks/report";
 import { Bound } from "./Bound";
 import { TableBox } from "./TableBox";
 
@@ -39,5 +39,25 @@ export function ComparisonTable({ comparisons, label }: { comparisons: readonly 
         ))}
       </tbody>
     </TableBox>
+  );
+}
+
+const reasons: Record<LeftOut["reason"], string> = {
+  budget: "it would take more operations than a check may",
+  bound: "the expressions are too large for the bound",
+};
+
+/** What a form should have been compared with and was not, in sentences; nothing where nothing was left out. */
+export function LeftOutSentences({ leftOut }: { leftOut: readonly LeftOut[] }) {
+  if (leftOut.length === 0) return null;
+  return (
+    <ul>
+      {leftOut.map((left) => (
+        <li key={`${left.with} ${left.n ?? ""}`}>
+          Not compared with {left.with}
+          {left.n !== undefined && ` at n = ${left.n}`}: {reasons[left.reason]}.
+        </li>
+      ))}
+    </ul>
   );
 }

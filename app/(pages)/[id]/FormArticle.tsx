@@ -1,6 +1,6 @@
 import type { FormView } from "../../_contract";
 import { CiteBox } from "../../_ui/CiteBox";
-import { ComparisonTable } from "../../_ui/ComparisonTable";
+import { ComparisonTable, LeftOutSentences } from "../../_ui/ComparisonTable";
 import { Diagnosis } from "../../_ui/Diagnosis";
 import { Formula } from "../../_ui/Formula";
 import { Marks } from "../../_ui/MarkSentence";
@@ -80,6 +80,7 @@ export function FormArticle({ form, bibtex, from }: { form: FormView; bibtex: st
             forms agree at all of these points with a probability below the bound; it is not a symbolic proof.
           </p>
           <ComparisonTable comparisons={report.comparisons} label={`What ${form.version} was compared with`} />
+          <LeftOutSentences leftOut={report.leftOut} />
         </Section>
       )}
 

@@ -33,6 +33,7 @@ export const accepted: Report = {
     { with: "on-shell recursion", kind: "source", agrees: true, points: 12, primes: 3, bound: "2^-180" },
     { with: "n6k1L0-2", kind: "form", agrees: true, points: 8, primes: 2, bound: "2^-108" },
   ],
+  leftOut: [],
   marks: {
     cyclic: {
       state: "holds",

@@ -1,5 +1,5 @@
 import type { CheckView } from "../../../_contract";
-import { ComparisonTable } from "../../../_ui/ComparisonTable";
+import { ComparisonTable, LeftOutSentences } from "../../../_ui/ComparisonTable";
 import { Diagnosis } from "../../../_ui/Diagnosis";
 import { Marks } from "../../../_ui/MarkSentence";
 import { Lead, Opening, Page, Section } from "../../../_ui/Page";
@@ -37,9 +37,12 @@ export function VerdictArticle({ check, report }: { check: CheckView; report: Re
           <Marks marks={report.marks} />
         </Section>
       )}
-      {report.comparisons.length > 0 && (
+      {report.comparisons.length + report.leftOut.length > 0 && (
         <Section id="comparisons" head="Compared with">
-          <ComparisonTable comparisons={report.comparisons} label="What it was compared with" />
+          {report.comparisons.length > 0 && (
+            <ComparisonTable comparisons={report.comparisons} label="What it was compared with" />
+          )}
+          <LeftOutSentences leftOut={report.leftOut} />
         </Section>
       )}
       {check.notation !== null && (
