@@ -1,5 +1,6 @@
 import { describe, expect, it } from "vitest";
 import { countRecursionTerms, type DeriveRequest, derive, mostDerivedTerms } from "../../../engine/derive";
+import { parse, printFormula, withoutSpans } from "../../../engine/notation";
 import type { Formula } from "../../../engine/notation/tree";
 
 const written = (request: DeriveRequest) => {
@@ -57,6 +58,23 @@ describe("the recursion written as syntax trees", () => {
       expect([...used].sort()).toEqual([...names].sort());
       const values = definitions.map(({ value }) => JSON.stringify(value));
       expect(new Set(values).size).toBe(values.length);
+    }
+  });
+
+  it("is a formula of the notation: printed and read again it is the same tree", () => {
+    for (const request of [
+      { n: 4, k: 0, loops: 0, method: "recursion" },
+      { n: 8, k: 3, loops: 0, method: "recursion" },
+      { n: 6, k: 0, loops: 1, method: "recursion" },
+      { n: 7, k: 2, loops: 1, method: "recursion" },
+      { n: 7, k: 1, loops: 0, method: "vertex" },
+      { n: 7, k: 0, loops: 1, method: "vertex" },
+      { n: 7, k: 0, loops: 1, method: "local" },
+      { n: 7, k: 0, loops: 2, method: "local" },
+    ] as const) {
+      const { formula } = written(request);
+      const read = parse(printFormula(formula));
+      expect(read.ok && withoutSpans(read.value), JSON.stringify(request)).toEqual(withoutSpans(formula));
     }
   });
 
