@@ -22,12 +22,27 @@ export {
 } from "./checks";
 export * from "./checks/report";
 export { type DeriveRequest, derive, deriveMethods } from "./derive";
-export { evaluateForm } from "./evaluate";
+export {
+  allHelicities,
+  evaluateForm,
+  helicityPattern,
+  mostValues,
+  type NumberKind,
+  numberKinds,
+  type PointRemark,
+  type PointSource,
+  readHelicities,
+  type ValueColumn,
+  type ValueRequest,
+  type ValueTable,
+  valuesOf,
+  type WrittenNumber,
+} from "./evaluate";
 export { fingerprint } from "./evaluate/fingerprint";
 export { type FormAtN, formAt, pointUse } from "./evaluate/form";
 export { exporters } from "./export";
-export { type Field, fromRational, MERSENNE_61, primeField, randomness, rationals } from "./fields";
-export { mapPoint, type Point, randomPoint, readPoints } from "./kinematics";
+export { randomness, rationals, realDoubles } from "./fields";
+export { phaseSpaceVolume, rationalMomenta, scatteringPoint } from "./kinematics";
 export {
   amplitudeKey,
   canonicalJson,

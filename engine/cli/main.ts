@@ -4,10 +4,11 @@ import { type Call, type Command, type Exit, helpText, type Io, parseCall, Usage
 import { derive } from "./derive";
 import { digest } from "./digest";
 import { exportForm } from "./export";
+import { points } from "./points";
 import { replay } from "./replay";
 import { value } from "./value";
 
-export const commands: readonly Command[] = [check, value, derive, digest, exportForm, replay];
+export const commands: readonly Command[] = [check, value, points, derive, digest, exportForm, replay];
 
 /** Runs one command; `words` are those after the program's name. Never throws for what a person typed. */
 export async function main(words: readonly string[], io: Io): Promise<Exit> {

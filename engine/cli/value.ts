@@ -1,15 +1,28 @@
-/** `value`: a form at points. */
-import { evaluateForm } from "../evaluate";
-import { type FormAtN, formAt, pointUse } from "../evaluate/form";
-import { type Field, fromRational, MERSENNE_61, primeField, randomness, rationals } from "../fields";
-import { mapPoint, type Point, randomPoint, readPoints } from "../kinematics";
-import { readEntry } from "../notation";
-import type { Diagnostic, Result } from "../result";
-import { failure, success } from "../result";
+/** `value`: a form at points, or its gluon components. */
+import {
+  allHelicities,
+  type Diagnostic,
+  type Form,
+  type FormAtN,
+  failure,
+  formAt,
+  mostValues,
+  type NumberKind,
+  numberKinds,
+  type PointSource,
+  pointUse,
+  type Result,
+  readEntry,
+  readHelicities,
+  success,
+  type ValueTable,
+  valuesOf,
+} from "../index";
 import { type Call, type Command, type Exit, integerOption, Usage } from "./command";
 import { readText } from "./files";
 import { diagnosticsText, printJson } from "./print";
 import { freshSeed } from "./seed";
+import { tableJson, tableText } from "./valueTable";
 
 const mostRandom = 10_000;
 
@@ -18,120 +31,129 @@ export const value: Command = {
   positional: "FILE",
   fewestPositional: 1,
   mostPositional: 1,
-  summary: "Evaluates the form of an entry document at given or random points.",
+  summary: "Evaluates the form of an entry document at given or random points, or at physical momenta.",
   options: [
-    { name: "points", value: "FILE", help: "points with rational coordinates, as the conventions page describes them" },
-    { name: "random", value: "N", help: `N random points, 1 to ${mostRandom}, in place of --points` },
-    { name: "seed", value: "S", help: "seed of the random points; drawn and printed where it is left out" },
-    { name: "field", value: "FIELD", help: "rational (the default) or prime, the integers modulo 2^61-1" },
+    {
+      name: "points",
+      value: "FILE",
+      help: 'points with twistors as coordinates, "p/q" each; ["re", "im"] with --field complex',
+    },
+    {
+      name: "momenta",
+      value: "FILE",
+      help: "four-momenta (E, x, y, z) of the legs, all outgoing, massless and conserved; the command points draws some",
+    },
+    { name: "random", value: "N", help: `N random points, 1 to ${mostRandom}, in place of a file` },
+    {
+      name: "seed",
+      value: "S",
+      help: "seed of the random points, or of the references * and X beside momenta; drawn and printed where it is left out",
+    },
+    {
+      name: "field",
+      value: "FIELD",
+      help: "rational (exact, the default), prime (the integers modulo 2^61-1), or complex (double precision with an error estimate, the default for --momenta). Exact momenta have spinors that begin with 1, so their values differ from complex ones by a power of that scale for each leg",
+    },
+    {
+      name: "helicities",
+      value: "SIGNS",
+      help: "the gluon component of a superamplitude, as in --helicities=--+-++ (k+2 minus signs, all legs outgoing); MHV denominator included",
+    },
+    { name: "all-helicities", help: "every component with k+2 minus signs" },
     { name: "n", value: "N", help: "the n to evaluate at, for a form for many n" },
   ],
   run,
 };
 
 async function run(call: Call): Promise<Exit> {
-  const points = call.option("points");
-  const random = integerOption(call, "random", 1, mostRandom);
-  const fieldName = call.option("field") ?? "rational";
-  if ((points === null) === (random === null)) throw new Usage("give either --points FILE or --random N");
-  if (fieldName !== "rational" && fieldName !== "prime")
-    throw new Usage(`--field: expected rational or prime, got ${fieldName}`);
+  const given = ["points", "momenta", "random"].filter((name) => call.has(name));
+  if (given.length !== 1) throw new Usage("give one of --points FILE, --momenta FILE and --random N");
+  const numbers = numbersAsked(call);
+  if (numbers === "prime" && call.has("momenta")) throw new Usage("--momenta goes with --field complex or rational");
   const text = await readText(call.positional[0] ?? "-", call.io);
   const entry = text.ok ? readEntry(text.value) : text;
   if (!entry.ok) return fail(call, entry.diagnostics);
-  const { amplitude } = entry.value;
-  const asked = integerOption(call, "n", 4, 64);
-  if (typeof amplitude.n === "number" && asked !== null && asked !== amplitude.n)
-    throw new Usage(`--n: this form is for n = ${amplitude.n}`);
-  const n = asked ?? (typeof amplitude.n === "number" ? amplitude.n : amplitude.n.from);
-  if (typeof amplitude.n !== "number" && (n < amplitude.n.from || (amplitude.n.to !== null && n > amplitude.n.to)))
-    throw new Usage(
-      `--n: this form is for n from ${amplitude.n.from}${amplitude.n.to === null ? "" : ` to ${amplitude.n.to}`}`,
-    );
-  const form = formAt(entry.value, n);
-  const seed = random === null ? null : (call.option("seed") ?? freshSeed());
-  const reply =
-    fieldName === "rational"
-      ? await values(rationals, form, call, points, random, seed)
-      : await values(primeField(MERSENNE_61), form, call, points, random, seed);
-  if (!reply.ok) return fail(call, reply.diagnostics);
-  const result = { ...reply.value, ...(seed === null ? {} : { seed }) };
-  if (call.json) printJson(call, result);
+  const form = formAt(entry.value, sizeAsked(call, entry.value));
+  const helicities = helicitiesAsked(call, form);
+  const source = await sourceAsked(call);
+  if (!source.ok) return fail(call, source.diagnostics);
+  const table = valuesOf({ form, source: source.value, numbers, helicities });
+  if (!table.ok) return fail(call, table.diagnostics);
+  const seed = seedUsed(form, source.value);
+  const many = call.has("all-helicities");
+  if (call.json) printJson(call, tableJson(table.value, many, seed));
   else {
-    call.io.stdout.write(
-      `${result.values.map((v, i) => v ?? `no value: ${result.reasons?.find((r) => r.point === i)?.message}`).join("\n")}\n`,
-    );
+    call.io.stdout.write(tableText(table.value, many));
+    for (const warning of warningLines(table.value)) call.io.stderr.write(`${warning}\n`);
     if (seed !== null && call.option("seed") === null) call.io.stderr.write(`seed ${seed}\n`);
   }
   return 0;
 }
 
-interface Values {
-  readonly values: readonly (string | null)[];
-  /** For each null its point and why it has no value. */
-  readonly reasons?: readonly { readonly point: number; readonly message: string }[];
+const warningLines = (table: ValueTable): string[] =>
+  table.warnings.map(({ point, message }) => `point ${point}: ${message}`);
+
+function numbersAsked(call: Call): NumberKind {
+  const name = call.option("field") ?? (call.has("momenta") ? "complex" : "rational");
+  const kind = numberKinds.find((known) => known === name);
+  if (kind === undefined) throw new Usage(`--field: expected ${numberKinds.join(", ")}, got ${name}`);
+  return kind;
 }
 
-async function values<T>(
-  field: Field<T>,
-  form: FormAtN,
-  call: Call,
-  file: string | null,
-  random: number | null,
-  seed: string | null,
-): Promise<Result<Values>> {
-  const points =
-    file === null ? success(drawn(field, form, random ?? 0, seed ?? "")) : await given(field, form, file, call);
-  if (!points.ok) return points;
-  const reasons: { point: number; message: string }[] = [];
-  const found = points.value.map((point, i) => {
-    const evaluation = evaluateForm(field, form, point);
-    if (evaluation.kind === "value") return field.toText(evaluation.sum);
-    reasons.push({
-      point: i,
-      message: `a denominator vanishes at characters ${evaluation.span[0]} to ${evaluation.span[1]} of the notation`,
-    });
-    return null;
-  });
-  return success({ values: found, ...(reasons.length > 0 ? { reasons } : {}) });
+/** The n to evaluate at. @throws Usage where the form has no such n */
+function sizeAsked(call: Call, { amplitude }: Form): number {
+  const asked = integerOption(call, "n", 4, 64);
+  const { n: range } = amplitude;
+  if (typeof range === "number") {
+    if (asked !== null && asked !== range) throw new Usage(`--n: this form is for n = ${range}`);
+    return range;
+  }
+  const n = asked ?? range.from;
+  if (n < range.from || (range.to !== null && n > range.to))
+    throw new Usage(`--n: this form is for n from ${range.from}${range.to === null ? "" : ` to ${range.to}`}`);
+  return n;
 }
 
-function drawn<T>(field: Field<T>, form: FormAtN, count: number, seed: string): Point<T>[] {
-  const random = randomness(seed);
-  return Array.from({ length: count }, () => randomPoint(field, form, random));
+function helicitiesAsked(call: Call, form: FormAtN): (readonly number[] | null)[] {
+  const pattern = call.option("helicities");
+  if (call.has("all-helicities")) {
+    if (pattern !== null) throw new Usage("give either --helicities or --all-helicities");
+    if (form.negativeLegs !== null) throw new Usage("--all-helicities: this form is one component");
+    // Counted before they are written out: C(n, k+2) is beyond all memory for n = 64.
+    let count = 1;
+    for (let i = 1; i <= form.k + 2; i++) count = (count * (form.n - form.k - 2 + i)) / i;
+    if (count > mostValues)
+      throw new Usage(`--all-helicities: there are ${count} of them, and at most ${mostValues} values in one call`);
+    return allHelicities(form.n, form.k);
+  }
+  if (pattern === null) return [null];
+  const negativeLegs = readHelicities(pattern, form.n);
+  if (negativeLegs === null) throw new Usage(`--helicities: expected ${form.n} signs + and -, got ${pattern}`);
+  return [negativeLegs];
 }
 
-/** Points from a file: rationals, carried over to the field where it is another. */
-async function given<T>(
-  field: Field<T>,
-  form: FormAtN,
-  file: string,
-  call: Call,
-): Promise<Result<readonly Point<T>[]>> {
+async function sourceAsked(call: Call): Promise<Result<PointSource>> {
+  const random = integerOption(call, "random", 1, mostRandom);
+  const seed = call.option("seed") ?? freshSeed();
+  if (random !== null) return success({ kind: "random", count: random, seed });
+  const points = call.option("points");
+  const file = points ?? call.option("momenta") ?? "-";
   const text = await readText(file, call.io);
   if (!text.ok) return text;
-  let document: unknown;
+  const what = points === null ? "momenta" : "points";
   try {
-    document = JSON.parse(text.value);
+    const document: unknown = JSON.parse(text.value);
+    return success(points === null ? { kind: "momenta", document, seed } : { kind: "points", document });
   } catch {
-    return failure({ code: "points-json", message: `${file} is not JSON.`, help: "Give a points document." });
+    return failure({ code: `${what}-json`, message: `${file} is not JSON.`, help: `Give a ${what} document.` });
   }
-  const points = readPoints(document, form, pointUse(form));
-  if (!points.ok) return points;
-  let outside = false;
-  const carried = points.value.map((point) =>
-    mapPoint(point, (x) => {
-      const image = fromRational(field, x);
-      outside ||= image === null;
-      return image ?? field.zero;
-    }),
-  );
-  if (!outside) return success(carried);
-  return failure({
-    code: "points-field",
-    message: `A coordinate has a denominator that is zero in the ${field.name}.`,
-    help: "Use --field rational.",
-  });
+}
+
+/** The seed that the values depend on: with momenta it draws the references, where the form has any. */
+function seedUsed(form: FormAtN, source: PointSource): string | null {
+  if (source.kind === "points") return null;
+  const use = pointUse(form);
+  return source.kind === "random" || use.referenceTwistor || use.referenceLine ? source.seed : null;
 }
 
 function fail(call: Call, diagnostics: readonly Diagnostic[]): Exit {
