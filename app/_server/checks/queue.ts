@@ -155,7 +155,9 @@ export async function renew(
       where: heldBy(claim),
       data: {
         leaseUntil: new Date(now().getTime() + lease),
-        ...(progress ? { ...progress, seq: { increment: 1 } } : {}),
+        ...(progress
+          ? { stage: progress.stage, done: progress.done, total: progress.total, seq: { increment: 1 } }
+          : {}),
       },
     }),
   );

@@ -78,6 +78,9 @@ export async function prepareCode(programs) {
   install();
   exclusively("generate", () => step("database clients", ["prisma/generate.mjs"], true));
   exclusively("kernel", () => step("kernel", ["engine/tape/kernel/build.mjs"], true));
+  // The pages hold the kernel too, so it is made even where no bundle is.
+  const { ensureKernel } = await import("../../../engine/tape/kernel/build.mjs");
+  await ensureKernel();
   const { bundle } = await import("./bundle.mjs");
   for (const name of programs) await bundle(name);
 }
