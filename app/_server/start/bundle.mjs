@@ -1,7 +1,6 @@
 // Bundles the programs that run outside Next with esbuild: the command line, the check worker and its thread.
 import { existsSync, mkdirSync, readdirSync, renameSync, rmSync, statSync, utimesSync } from "node:fs";
 import { join } from "node:path";
-import { ensureKernel } from "../../../engine/tape/kernel/build.mjs";
 import { root } from "./install.mjs";
 
 const server = ["engine", "app/_server", "app/_contract", "generated", "prisma"];
@@ -44,8 +43,6 @@ export async function bundle(name) {
   const { ensureKernel } = await import("../../../engine/tape/kernel/build.mjs");
   await ensureKernel();
   const started = new Date();
-  await ensureKernel();
-  await ensureKernel();
   const { build } = await import("esbuild");
   mkdirSync(join(root, "build"), { recursive: true });
   const temporary = join(root, "build", `.${name}.${process.pid}.mjs`);
