@@ -9,7 +9,7 @@ import {
   scalarBody,
   symmetricPlaces,
 } from "../notation/expand";
-import { evaluateLabel, evaluateNumber, momentumLegs } from "../notation/indices";
+import { evaluateIndex, evaluateLabel, evaluateNumber, momentumLegs } from "../notation/indices";
 import type {
   Definition,
   DualPoint,
@@ -17,6 +17,7 @@ import type {
   Formula,
   IndexExpression,
   Item,
+  NamedItem,
   Operand,
   SpinorEnd,
 } from "../notation/tree";
@@ -48,6 +49,7 @@ export class Lowering {
   private readonly definitions: ReadonlyMap<string, Definition>;
   private readonly numbers = new Map<string, number>();
   private readonly uses = new TupleTable();
+  private readonly useKey: number[] = [];
   private readonly scalars: (Element | undefined)[] = [];
   private readonly figures: (Figure | undefined)[] = [];
   private readonly invariants = new TupleTable();
@@ -114,10 +116,14 @@ export class Lowering {
       case "sym":
         return exterior.add(symmetricPlaces(place, form.loops).map((at) => this.value(expression.body, at)));
       case "call": {
-        const at = this.use(expression.name, expression.arguments, place);
-        return this.remember(this.scalars, at, () =>
-          this.value(scalarBody(this.definitions, expression.name), at.place),
-        );
+        const use = this.use(expression.name, expression.arguments, place);
+        const known = this.scalars[use];
+        if (known !== undefined) return known;
+        const definition = this.definitions.get(expression.name)!;
+        const at = definitionPlace(definition, expression.arguments, place, form.n);
+        const value = this.value(scalarBody(this.definitions, expression.name), at);
+        this.scalars[use] = value;
+        return value;
       }
       case "unknown":
         throw new Error(`value: expected a formula without unknowns, got ?${expression.name}`);
@@ -255,15 +261,21 @@ export class Lowering {
       case "meet":
         return this.meet(this.operand(item.left, place), this.operand(item.right, place));
       case "named": {
-        const at = this.use(item.name, item.arguments, place);
-        return this.remember(this.figures, at, () => {
-          const value = this.definitions.get(item.name)!.value;
-          if (value.kind !== "geometry") throw new Error(`item: expected ${item.name} to be a point, line or plane`);
-          const { geometry: shape } = value;
-          return shape.kind === "meet" ? this.item(shape, at.place) : this.figure(shape.items, at.place);
-        });
+        const use = this.use(item.name, item.arguments, place);
+        this.figures[use] ??= this.named(item, place);
+        return this.figures[use];
       }
     }
+  }
+
+  private named(item: NamedItem, place: Place): Figure {
+    const definition = this.definitions.get(item.name)!;
+    if (definition.value.kind !== "geometry") {
+      throw new Error(`named: expected ${item.name} to be a point, line or plane`);
+    }
+    const at = definitionPlace(definition, item.arguments, place, this.form.n);
+    const { geometry } = definition.value;
+    return geometry.kind === "meet" ? this.item(geometry, at) : this.figure(geometry.items, at);
   }
 
   private operand(operand: Operand, place: Place): Figure {
@@ -282,14 +294,17 @@ export class Lowering {
     return pointFigure(this.geometry.meetOfLineAndPlane(line, plane));
   }
 
-  /** A use of a definition: where its body stands, and the number of this (name, arguments, shift, permutation). */
-  private use(name: string, values: readonly IndexExpression[], place: Place): { place: Place; id: number } {
-    const definition = this.definitions.get(name)!;
-    const at = definitionPlace(definition, values, place, this.form.n);
-    const lines = place.permutation.reduce<number>((code, line) => code * 4 + line, 1);
-    const key = [this.numbers.get(name)!, place.shift, lines];
-    for (const parameter of definition.parameters) key.push(this.argumentCode(at.bindings.get(parameter)!));
-    return { place: at, id: this.uses.intern(key, key.length) };
+  /** The number of a use of a definition: of its (name, arguments, shift, permutation). */
+  private use(name: string, values: readonly IndexExpression[], place: Place): number {
+    let lines = 1;
+    for (const line of place.permutation) lines = lines * 4 + line;
+    const { useKey } = this;
+    useKey[0] = this.numbers.get(name)!;
+    useKey[1] = place.shift;
+    useKey[2] = lines;
+    useKey.length = 3;
+    for (const value of values) useKey.push(this.argumentCode(evaluateIndex(value, place.bindings)));
+    return this.uses.intern(useKey, useKey.length);
   }
 
   private argumentCode(value: bigint): number {
@@ -302,18 +317,10 @@ export class Lowering {
     return code;
   }
 
-  private remember<X>(known: (X | undefined)[], { id }: { id: number }, make: () => X): X {
-    const old = known[id];
-    if (old !== undefined) return old;
-    const made = make();
-    known[id] = made;
-    return made;
-  }
-
   /** Where a form's loop lines stand in x2( ) alone, it is a form in dual points: its measure brings <AB>^-4 for each line. */
   private dualMeasure(): Element | null {
     const { graph, geometry, form, exterior } = this;
-    if (!isInDualPoints(form.formula)) return null;
+    if (form.loops === 0 || !isInDualPoints(form.formula)) return null;
     const { span } = form.formula.expression;
     let measure = graph.one;
     for (let loop = 0; loop < form.loops; loop++) {

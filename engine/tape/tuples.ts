@@ -18,10 +18,7 @@ export class TupleTable {
 
   /** The place in the hash table where a tuple is, or would be. */
   private probe(tuple: ArrayLike<number>, length: number): number {
-    let hash = length;
-    for (let i = 0; i < length; i++) hash = Math.imul(hash ^ tuple[i]!, 0x9e3779b1) ^ (hash >>> 15);
-    hash = Math.imul(hash ^ (hash >>> 16), 0x85ebca6b);
-    let at = (hash ^ (hash >>> 13)) & this.mask;
+    let at = hashOf(tuple, 0, length) & this.mask;
     for (;;) {
       const id = this.slots[at]!;
       if (id < 0) return at;
@@ -53,15 +50,23 @@ export class TupleTable {
   }
 
   private rehash(): void {
-    this.slots = new Int32Array(this.slots.length * 2).fill(-1);
+    this.slots = new Int32Array(this.slots.length * 4).fill(-1);
     this.mask = this.slots.length - 1;
     for (let id = 0; id < this.size; id++) {
       const start = this.starts[id]!;
-      const end = this.starts[id + 1]!;
-      // All tuples differ, so that a probe for one ends at a free place.
-      this.slots[this.probe(this.words.subarray(start, end), end - start)] = id;
+      let at = hashOf(this.words, start, this.starts[id + 1]! - start) & this.mask;
+      while (this.slots[at]! >= 0) at = (at + 1) & this.mask;
+      this.slots[at] = id;
     }
   }
+}
+
+/** Spreads a tuple over 32 bits. */
+function hashOf(words: ArrayLike<number>, from: number, length: number): number {
+  let hash = length;
+  for (let i = from; i < from + length; i++) hash = Math.imul(hash ^ words[i]!, 0x9e3779b1) ^ (hash >>> 15);
+  hash = Math.imul(hash ^ (hash >>> 16), 0x85ebca6b);
+  return hash ^ (hash >>> 13);
 }
 
 /** A copy with room for at least `needed` entries, doubled so that growing costs a constant for each entry. */
