@@ -20,5 +20,6 @@ export { expandTerms } from "./expand";
 export { latexExpression, latexLines } from "./latex";
 export { type ParseOptions, parse, type Reading, read } from "./parse";
 export { printExpression, printFormula, printItem } from "./print";
+export { formulaSchema, treeSchema } from "./schema";
 export type * from "./tree";
 export { type ValidationContext, validate, validatePlaces } from "./validate";

@@ -112,6 +112,16 @@ class Lexer {
     }
     const numeric = isDigit(first ?? this.source[start]!);
     const belongs = numeric ? isDigit : isWord;
+    if (first === undefined) {
+      let end = start + 1;
+      while (end < this.source.length && belongs(this.source[end]!)) end += 1;
+      const next = this.source[end] ?? " ";
+      if (next < "\u0080" && next !== "." && end - start <= longestInteger) {
+        this.at = end;
+        this.tokens.add(numeric ? "integer" : "name", start, end);
+        return;
+      }
+    }
     while (this.at < this.source.length) {
       const from = this.at;
       while (this.at < this.source.length && belongs(this.source[this.at]!)) this.at += 1;
@@ -161,14 +171,20 @@ class Lexer {
 
   private punctuation(character: string): boolean {
     const start = this.at;
-    const two = this.source.slice(start, start + 2);
-    if (two === "<=" || two === ">=" || two === "!=" || two === "..") {
+    const next = this.source[start + 1];
+    const two =
+      next === "=" && (character === "<" || character === ">" || character === "!")
+        ? `${character}=`
+        : character === "." && next === "."
+          ? ".."
+          : null;
+    if (two !== null) {
       this.at += 2;
       if (two === ".." && this.source[this.at] === ".") {
         while (this.source[this.at] === ".") this.at += 1;
         this.faults.add("look-alike", [start, this.at], "A range is written with two dots.", { replacement: ".." });
       }
-      this.tokens.add(two, start, this.at, two);
+      this.tokens.add(two as TokenKind, start, this.at, two);
       return true;
     }
     if (!single.includes(character)) return false;

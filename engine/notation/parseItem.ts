@@ -286,10 +286,11 @@ function continueMeet(reader: Reader, left: Sized<Operand>, start: number): Size
     const source = line.grassmann === "loop" ? plane : line;
     return { item: meet, slots: 1, grassmann: source.grassmann };
   }
-  const named = (slots: number): string =>
-    slots === 1 ? "a point" : slots === 2 ? "a line" : slots === 3 ? "a plane" : "neither line nor plane";
-  const inRange = (slots: number): boolean => slots === 2 || slots === 3;
-  if (inRange(left.slots) || inRange(right.slots) || left.slots === 1 || right.slots === 1) {
+  const named = (slots: number): string => (slots === 1 ? "a point" : slots === 2 ? "a line" : "a plane");
+  // A parenthesis of another size has been reported already.
+  const isSized = ({ item, slots }: Sized<Operand>): boolean =>
+    slots === 2 || slots === 3 || reader.tokens.source[item.span[0]] !== "(";
+  if (isSized(left) && isSized(right)) {
     reader.faults.add(
       "cap-kinds",
       span,

@@ -243,6 +243,7 @@ export function readMandelstam(reader: Reader): Expression {
   reader.next();
   reader.next();
   const momenta: Momentum[] = [];
+  const from = reader.at;
   while (!reader.is(")") && !reader.is(";") && !reader.is("end")) {
     if (startsLabel(reader)) momenta.push(readMomentum(reader));
     else if (reader.is(",") && momenta.length > 0) reader.next();
@@ -260,7 +261,7 @@ export function readMandelstam(reader: Reader): Expression {
   const closed = reader.take(")");
   const span = reader.from(start);
   if (!closed) reader.faults.add("unclosed", span, "The parenthesis of s( ) is not closed.");
-  else if (momenta.length === 0)
+  else if (reader.at === from + 1)
     reader.faults.add("expected-item", span, "s( ) needs at least one momentum.", {
       help: "Write s(1 2 3) or s(i..j-1).",
     });
