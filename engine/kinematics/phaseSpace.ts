@@ -18,6 +18,22 @@ function direction(random: Randomness): [number, number, number] {
   }
 }
 
+/** Massless momenta boosted to the rest frame of their total and scaled to the given energy. */
+function atRest(momenta: readonly FourMomentum<number>[], energy: number): FourMomentum<number>[] {
+  const total = [0, 1, 2, 3].map((i) => momenta.reduce((sum, p) => sum + p[i]!, 0)) as unknown as FourMomentum<number>;
+  const mass = Math.sqrt(total[0] ** 2 - total[1] ** 2 - total[2] ** 2 - total[3] ** 2);
+  const boost = total.slice(1).map((x) => -x / mass) as [number, number, number];
+  const gamma = total[0] / mass;
+  const scale = energy / mass;
+  return momenta.map(([E, ...vector]) => {
+    const along = vector.reduce((sum, x, i) => sum + x * boost[i]!, 0);
+    const factor = E + along / (1 + gamma);
+    const [x, y, z] = vector.map((q, i) => scale * (q + boost[i]! * factor)) as [number, number, number];
+    // The energy from the momentum: what is left of p^2 is then rounding alone.
+    return [Math.hypot(x, y, z), x, y, z];
+  });
+}
+
 /**
  * `count` massless momenta of total (energy, 0, 0, 0), positive energies, flat in phase space: each of weight
  * `phaseSpaceVolume(count, energy)` as an estimate of an integral over it.
@@ -35,19 +51,8 @@ export function flatMomenta(count: number, energy: number, random: Randomness): 
     const E = -Math.log(uniform(random)) - Math.log(uniform(random));
     return [E, E * x, E * y, E * z];
   });
-  const total = [0, 1, 2, 3].map((i) => free.reduce((sum, p) => sum + p[i]!, 0)) as unknown as FourMomentum<number>;
-  const mass = Math.sqrt(total[0] ** 2 - total[1] ** 2 - total[2] ** 2 - total[3] ** 2);
-  // Into the rest frame of the total, and to the wanted energy.
-  const boost = total.slice(1).map((x) => -x / mass) as [number, number, number];
-  const gamma = total[0] / mass;
-  const scale = energy / mass;
-  return free.map(([E, ...vector]) => {
-    const along = vector.reduce((sum, x, i) => sum + x * boost[i]!, 0);
-    const factor = E + along / (1 + gamma);
-    const [x, y, z] = vector.map((q, i) => scale * (q + boost[i]! * factor)) as [number, number, number];
-    // The energy from the momentum: what is left of p^2 is then rounding alone.
-    return [Math.hypot(x, y, z), x, y, z];
-  });
+  // A large boost leaves rounding errors in the sum; the second one is tiny and takes them away.
+  return atRest(atRest(free, energy), energy);
 }
 
 /**
