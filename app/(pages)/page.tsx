@@ -34,9 +34,9 @@ export default async function Home({
         <LoopOrders present={triangle.loopOrders} chosen={loops} />
         <Triangle loops={loops} rows={triangle.rows} />
         <p>
-          One row for each number of legs n; in it k runs from 0, MHV on the left edge, to n − 4, its conjugate on the
-          right. Parity reflects the triangle. A stroke to the lower left adds a leg at the same k, a stroke to the
-          lower right raises k with it.
+          One row for each number of legs <i>n</i>; in it <i>k</i> runs from 0, MHV on the left edge, to <i>n</i>
+          &nbsp;−&nbsp;4, its conjugate on the right. Parity reflects the triangle. A stroke to the lower left adds a
+          leg at the same <i>k</i>, a stroke to the lower right raises <i>k</i> with it.
         </p>
         {triangle.everyN.length > 0 && (
           <>

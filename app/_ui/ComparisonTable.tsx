@@ -1,8 +1,7 @@
 import type { Comparison, LeftOut } from "../../engine/checks/report";
+import { formIdPattern } from "../_contract";
 import { Bound } from "./Bound";
 import { TableBox } from "./TableBox";
-
-const identifier = /^n(?:\d+|X)k\d+L\d-/;
 
 /** What a form was compared with, each with the number of points and primes and the bound that follows. */
 export function ComparisonTable({ comparisons, label }: { comparisons: readonly Comparison[]; label: string }) {
@@ -23,7 +22,7 @@ export function ComparisonTable({ comparisons, label }: { comparisons: readonly 
         {comparisons.map((comparison) => (
           <tr key={`${comparison.with} ${comparison.n ?? ""}`}>
             <th scope="row">
-              {comparison.kind === "form" && identifier.test(comparison.with) ? (
+              {comparison.kind === "form" && formIdPattern.test(comparison.with) ? (
                 <a href={`/${comparison.with}`}>{comparison.with}</a>
               ) : (
                 comparison.with

@@ -7,7 +7,7 @@ export function FirstFormula() {
   return (
     <form action="/submit" method="get" className={styles.first}>
       <p>
-        For example the tree amplitude with <i>n</i> = 7, <i>k</i> = 1 as a sum of R-invariants:
+        For example the tree amplitude with <i>n</i>&nbsp;=&nbsp;7, <i>k</i>&nbsp;=&nbsp;1 as a sum of R-invariants:
       </p>
       <p className={styles.formula}>
         <Latex latex="\sum_{1<i,\; i+1<j<n} [1\,i\,i{+}1\,j\,j{+}1]" />

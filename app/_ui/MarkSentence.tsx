@@ -10,7 +10,6 @@ export function MarkSentence({ code, mark }: { code: MarkCode; mark: Mark }) {
   return (
     <li>
       {sentence}
-      {mark.subgroup !== undefined && <> Manifest is the subgroup {mark.subgroup}.</>}
       {mark.evidence !== "" && (
         <span className={styles.evidence}>
           {" "}

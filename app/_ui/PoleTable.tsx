@@ -16,7 +16,7 @@ function termsOf(pole: Pole): string {
   return pole.terms.map((index) => index + 1).join(", ");
 }
 
-/** Poles of a form: physical ones first, each with where it stands and what is left of it in the sum. */
+/** Poles of a form: physical ones first, each with where it stands and its order there and in the sum. */
 export function PoleTable({ poles, label }: { poles: readonly Pole[]; label: string }) {
   const ordered = (["physical", "spurious"] as const).flatMap((kind) => poles.filter((pole) => pole.kind === kind));
   return (
@@ -25,9 +25,9 @@ export function PoleTable({ poles, label }: { poles: readonly Pole[]; label: str
         <tr>
           <th scope="col">Pole</th>
           <th scope="col">Kind</th>
-          <th scope="col">In terms</th>
-          <th scope="col">Order there</th>
-          <th scope="col">Order in the sum</th>
+          <th scope="col">Terms</th>
+          <th scope="col">In them</th>
+          <th scope="col">In the sum</th>
         </tr>
       </thead>
       <tbody>

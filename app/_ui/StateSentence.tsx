@@ -1,8 +1,9 @@
+import { Fragment } from "react";
 import type { Comparison, Report } from "../../engine/checks/report";
-import type { VersionState } from "../_contract";
+import { formIdPattern, type VersionState } from "../_contract";
 import { Bound } from "./Bound";
 import { Prose } from "./Prose";
-import { decapital, listed, numbered } from "./words";
+import { decapital, numbered } from "./words";
 
 /** The state of a version in words, for a table. */
 export const stateWords: Record<VersionState, string> = {
@@ -31,10 +32,10 @@ export function StateSentence({ state, report }: { state: VersionState; report: 
     const agreeing = report.comparisons.filter((comparison) => comparison.agrees);
     const bound = weakestBound(agreeing);
     const names = [...new Set(agreeing.map((comparison) => comparison.with))];
-    const shown = names.length > 4 ? [...names.slice(0, 3), `${numbered(names.length - 3, "other")}`] : names;
+    const shown = names.length > 4 ? [...names.slice(0, 3), numbered(names.length - 3, "other")] : names;
     return (
       <>
-        Accepted: it agrees with {listed(shown)}
+        Accepted: it agrees with <Names names={shown} />
         {report.range !== undefined && report.range.length > 1 && <> for n = {report.range.join(", ")}</>}
         {bound !== null && (
           <>
@@ -56,6 +57,16 @@ export function StateSentence({ state, report }: { state: VersionState; report: 
       Not accepted: <Prose text={reason(report.summary)} />
     </>
   );
+}
+
+/** A list of names in a sentence; identifiers of forms are links. */
+function Names({ names }: { names: readonly string[] }) {
+  return names.map((name, index) => (
+    <Fragment key={name}>
+      {index > 0 && (index === names.length - 1 ? " and " : ", ")}
+      {formIdPattern.test(name) ? <a href={`/${name}`}>{name}</a> : name}
+    </Fragment>
+  ));
 }
 
 /** The report's sentence as the second half of one: without the verdict at its head, or with it as a verb. */

@@ -14,14 +14,14 @@ interface Sentences {
 export const marks: Record<MarkCode, Sentences> = {
   cyclic: {
     name: "Cyclic symmetry",
-    holds: "It is cyclic in its legs, though its terms do not show it.",
-    manifest: "It is manifestly cyclic: a rotation of the legs permutes its terms.",
+    holds: "It is cyclic in its legs.",
+    manifest: "It is manifestly cyclic.",
     fails: "It is not cyclic in its legs.",
   },
   reflection: {
     name: "Reflection",
-    holds: "It has the reflection symmetry, though its terms do not show it.",
-    manifest: "It is manifestly symmetric under reflection: reversing the legs permutes its terms.",
+    holds: "It has the reflection symmetry.",
+    manifest: "It is manifestly symmetric under reflection.",
     fails: "It lacks the reflection symmetry.",
   },
   parity: {
@@ -32,14 +32,14 @@ export const marks: Record<MarkCode, Sentences> = {
   },
   loopExchange: {
     name: "Exchange of loop lines",
-    holds: "It does not change when loop lines are exchanged, though its terms do not show it.",
+    holds: "It does not change when loop lines are exchanged.",
     manifest: "It is manifestly symmetric in its loop lines.",
     fails: "It changes when loop lines are exchanged.",
   },
   dualConformal: {
     name: "Dual conformal symmetry",
-    holds: "It is dual conformal: it has the right weights and no infinity twistor remains.",
-    manifest: "It is manifestly dual conformal: no infinity twistor is written.",
+    holds: "It is dual conformal.",
+    manifest: "It is manifestly dual conformal.",
     fails: "It is not dual conformal.",
   },
   referenceIndependent: {

@@ -69,6 +69,7 @@ export function FormArticle({ form, bibtex, from }: { form: FormView; bibtex: st
 
       {report !== null && report.poles.length > 0 && (
         <Section id="poles" head="Poles">
+          <p>Brackets in the denominators, the terms that hold them, and the order of the pole there and in the sum.</p>
           <PoleTable poles={report.poles} label={`Poles of ${form.version}`} />
         </Section>
       )}
@@ -91,7 +92,7 @@ export function FormArticle({ form, bibtex, from }: { form: FormView; bibtex: st
               <li key={equal.id}>
                 <a href={`/${equal.id}`}>{equal.id}</a>
                 {equal.title !== null && <>: {equal.title}</>}
-                {equal.terms !== null && <>, {numbered(equal.terms, "term")}</>}
+                {equal.terms !== null && <> ({numbered(equal.terms, "term")})</>}
               </li>
             ))}
           </ul>
