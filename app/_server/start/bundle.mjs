@@ -11,6 +11,7 @@ export const programs = {
   worker: { entry: "app/_server/checks/worker.ts", sources: server },
   "check-thread": { entry: "app/_server/checks/thread.ts", sources: ["engine", "app/_server/checks"] },
   env: { entry: "app/_server/env.ts", sources: ["app/_server/env.ts"] },
+  bench: { entry: "app/_server/bench/main.ts", sources: ["engine", "app/_server/bench"] },
   seed: { entry: "prisma/seed.ts", sources: server },
 };
 
