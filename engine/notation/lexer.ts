@@ -3,32 +3,37 @@ import type { Faults } from "./faults";
 import { longestInteger, mostSourceUnits } from "./limits";
 import { isForeignSpace, isInvisible, plainText } from "./lookalikes";
 
+const kinds = [
+  "end",
+  "integer",
+  "name",
+  "<",
+  ">",
+  "<=",
+  ">=",
+  "=",
+  "!=",
+  "[",
+  "]",
+  "(",
+  ")",
+  "|",
+  "+",
+  "-",
+  "*",
+  "/",
+  "^",
+  ",",
+  ";",
+  ":",
+  "?",
+  "..",
+] as const;
+
 /** Kinds of tokens: the punctuation stands for itself. */
-export type TokenKind =
-  | "integer"
-  | "name"
-  | "end"
-  | "<"
-  | ">"
-  | "<="
-  | ">="
-  | "="
-  | "!="
-  | "["
-  | "]"
-  | "("
-  | ")"
-  | "|"
-  | "+"
-  | "-"
-  | "*"
-  | "/"
-  | "^"
-  | ","
-  | ";"
-  | ":"
-  | "?"
-  | "..";
+export type TokenKind = (typeof kinds)[number];
+
+const numbers: ReadonlyMap<TokenKind, number> = new Map(kinds.map((kind, at) => [kind, at]));
 
 const single = "<>=[]()|+-*/^,;:?";
 const isDigit = (character: string): boolean => character >= "0" && character <= "9";
@@ -36,38 +41,47 @@ const isLetter = (character: string): boolean =>
   (character >= "a" && character <= "z") || (character >= "A" && character <= "Z");
 const isWord = (character: string): boolean => isLetter(character) || isDigit(character) || character === "_";
 
-/** The tokens of a text, in arrays side by side so that two million characters stay within a few tens of megabytes. */
+/** The tokens of a text, in typed arrays side by side so that two million characters take a few tens of megabytes. */
 export class Tokens {
-  private readonly kinds: TokenKind[] = [];
-  private readonly starts: number[] = [];
-  private readonly ends: number[] = [];
+  private readonly kinds: Uint8Array;
+  private readonly starts: Uint32Array;
+  private readonly ends: Uint32Array;
+  private length = 0;
   /** Texts that differ from the source, because a look-alike was read as what it resembles. */
   private readonly texts = new Map<number, string>();
 
-  constructor(readonly source: string) {}
+  constructor(readonly source: string) {
+    // A superscript is two tokens, so there may be twice as many as characters, but reports end the reading long before.
+    const room = source.length + 1_000;
+    this.kinds = new Uint8Array(room);
+    this.starts = new Uint32Array(room);
+    this.ends = new Uint32Array(room);
+  }
 
   add(kind: TokenKind, start: number, end: number, text?: string): void {
-    if (text !== undefined && text !== this.source.slice(start, end)) this.texts.set(this.kinds.length, text);
-    this.kinds.push(kind);
-    this.starts.push(start);
-    this.ends.push(end);
+    const at = this.length;
+    if (text !== undefined && text !== this.source.slice(start, end)) this.texts.set(at, text);
+    this.kinds[at] = numbers.get(kind)!;
+    this.starts[at] = start;
+    this.ends[at] = end;
+    this.length += 1;
   }
 
   get count(): number {
-    return this.kinds.length;
+    return this.length;
   }
 
   /** Past the last token: `end`. */
   kind(at: number): TokenKind {
-    return this.kinds[at] ?? "end";
+    return at >= 0 && at < this.length ? kinds[this.kinds[at]!]! : "end";
   }
 
   start(at: number): number {
-    return this.starts[at] ?? this.source.length;
+    return at >= 0 && at < this.length ? this.starts[at]! : this.source.length;
   }
 
   end(at: number): number {
-    return this.ends[at] ?? this.source.length;
+    return at >= 0 && at < this.length ? this.ends[at]! : this.source.length;
   }
 
   text(at: number): string {
