@@ -10,6 +10,7 @@ import { beforeAll, expect, it } from "vitest";
 import { getForm, localUser } from "../../app/_server";
 import { read } from "../../app/_server/db";
 import { onEachDatabase } from "./support/databases";
+import { random } from "./support/random";
 
 const long = process.env.EQUIFORM_LONG === "1";
 const kills = long ? 40 : 6;
@@ -35,17 +36,6 @@ beforeAll(async () => {
     },
   });
 });
-
-/** mulberry32: a fixed sequence, so that a failure can be repeated. */
-function random(seed: number): () => number {
-  let state = seed;
-  return () => {
-    state = (state + 0x6d2b79f5) | 0;
-    let t = Math.imul(state ^ (state >>> 15), 1 | state);
-    t = (t + Math.imul(t ^ (t >>> 7), 61 | t)) ^ t;
-    return ((t ^ (t >>> 14)) >>> 0) / 4294967296;
-  };
-}
 
 const pause = (milliseconds: number) => new Promise((resolve) => setTimeout(resolve, milliseconds));
 const exited = (child: ChildProcess) =>

@@ -3,8 +3,9 @@ import type { FormView } from "../../_contract";
 
 const special: Record<string, string> = {
   "\\": "\\textbackslash{}",
-  "{": "\\{",
-  "}": "\\}",
+  // An escaped brace still counts when BibTeX matches braces; the named ones come in no pair.
+  "{": "\\textbraceleft{}",
+  "}": "\\textbraceright{}",
   $: "\\$",
   "&": "\\&",
   "#": "\\#",
