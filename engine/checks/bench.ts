@@ -1,7 +1,9 @@
 /** What the marks and the diagnosis work with: one form at one n, prepared, with its values at the samples of the check. */
 import type { FormAtN } from "../evaluate/form";
 import type { Outcome, PreparedForm, Sample } from "./evaluator";
+import type { Ground } from "./ground";
 import type { Pole, Target } from "./report";
+import type { SeriesForm } from "./seriesEvaluator";
 
 export interface Value {
   readonly sum: number;
@@ -13,6 +15,10 @@ export interface Bench {
   readonly form: FormAtN;
   readonly target: Target;
   readonly prepared: PreparedForm;
+  /** Values in Laurent series, for what is looked at near a divisor or in a limit. */
+  readonly series: SeriesForm;
+  /** Generic points that paths start from, drawn once for all marks. */
+  readonly ground: (attempt: number) => Ground;
   readonly samples: readonly Sample[];
   /** Values of the form at the samples, in their order. */
   readonly values: readonly Value[];

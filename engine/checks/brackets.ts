@@ -12,7 +12,13 @@ export type Point =
   | { readonly kind: "reference"; readonly which: 0 | 1 }
   | { readonly kind: "meet"; readonly line: readonly Point[]; readonly plane: readonly Point[]; readonly text: string }
   /** One of the two points of the line where two planes meet: only the pair has a value. */
-  | { readonly kind: "planes"; readonly which: 0 | 1; readonly text: string };
+  | {
+      readonly kind: "planes";
+      readonly which: 0 | 1;
+      readonly left: readonly Point[];
+      readonly right: readonly Point[];
+      readonly text: string;
+    };
 
 const letters = "ABCDEFGH";
 
@@ -64,8 +70,8 @@ export function meetLine(left: readonly Point[], right: readonly Point[]): reado
   const [a, b] = [itemsText(left), itemsText(right)].sort();
   const text = `(${a}) cap (${b})`;
   return [
-    { kind: "planes", which: 0, text },
-    { kind: "planes", which: 1, text },
+    { kind: "planes", which: 0, left, right, text },
+    { kind: "planes", which: 1, left, right, text },
   ];
 }
 
@@ -77,7 +83,8 @@ const without = (points: readonly Point[], p: Point): readonly Point[] => {
 
 /**
  * The factors of a four-bracket, each a list of four points. <(a b) cap (c d e) a f g> = -<b a f g><a c d e>, and
- * <(a b) cap (c d e) d e f> = -<c d e f><d e a b>; other brackets are one factor.
+ * <(a b) cap (c d e) d e f> = -<c d e f><d e a b>. Two points of one line, (a b) cap P and (a b) cap Q, span that line times
+ * <a b P cap Q>; (a b) cap (c d e) and (c d) cap (a b e) span the line (c d e) cap (a b e) times <a b c d>. Other brackets are one factor.
  */
 export function factorsOfFour(points: readonly Point[]): readonly (readonly Point[])[] {
   for (const p of points) {
@@ -95,8 +102,28 @@ export function factorsOfFour(points: readonly Point[]): readonly (readonly Poin
       if (rest !== undefined) return [...factorsOfFour([rest, ...others]), ...factorsOfFour([...inPlane, ...p.line])];
     }
   }
+  const [p, q] = points.filter((point) => point.kind === "meet");
+  if (p?.kind === "meet" && q?.kind === "meet") {
+    const others = without(without(points, p), q);
+    const line = [...p.line];
+    if (sameSet(p.line, q.line))
+      return [
+        [...others, ...line],
+        [...line, ...meetLine(p.plane, q.plane)],
+      ].flatMap(factorsOfFour);
+    const [rest] = p.plane.filter((point) => !holds(q.line, point));
+    if (rest !== undefined && sameSet(p.plane, [...q.line, rest]) && sameSet(q.plane, [...p.line, rest]))
+      return [
+        [...p.line, ...q.line],
+        [...others, ...meetLine(p.plane, q.plane)],
+      ].flatMap(factorsOfFour);
+  }
   return [points];
 }
+
+const holds = (points: readonly Point[], p: Point): boolean => points.some((q) => same(p, q));
+const sameSet = (a: readonly Point[], b: readonly Point[]): boolean =>
+  a.length === b.length && a.every((p) => holds(b, p)) && b.every((p) => holds(a, p));
 
 /** True for <i i+1 j j+1>, <AB i i+1> and <AB CD>: the poles that a planar amplitude has. */
 export function isPhysicalFour(points: readonly Point[], n: number): boolean {

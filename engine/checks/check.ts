@@ -3,7 +3,7 @@ import { fingerprint } from "../evaluate/fingerprint";
 import { formAt } from "../evaluate/form";
 import { amplitudeKey, componentText, digestOf, type Form, sizesOf } from "../notation";
 import type { Diagnostic } from "../result";
-import { evaluatorName } from "./evaluator";
+import { evaluatorName, FormTooLarge } from "./evaluator";
 import { markChecks } from "./marks";
 import type { Comparison, Diagnosis, Mark, MarkCode, Report } from "./report";
 import { checkSize, type SizeEvidence, type SizeResult } from "./size";
@@ -47,13 +47,22 @@ export const defaultBudget = 300_000_000;
 /** An open range is checked up to this n, or for four values of n where it begins later. */
 const largestOpenN = 10;
 
-const stagesPerSize = 3 + markChecks.length;
+const stagesPerSize = 4 + markChecks.length;
 
 /**
  * Checks a form that was read without faults. A pure function of its arguments.
  * @throws CheckCancelled when `cancelled` says so between two steps.
  */
 export function checkForm(form: Form, options: CheckOptions): CheckRecord {
+  try {
+    return checkSizes(form, options);
+  } catch (error) {
+    if (!(error instanceof FormTooLarge)) throw error;
+    return { report: unreadable(error.diagnostics), evidence: [], compared: [] };
+  }
+}
+
+function checkSizes(form: Form, options: CheckOptions): CheckRecord {
   const sizes = sizesOf(form, largestOpenN);
   const digest = digestOf(form);
   const total = sizes.length * stagesPerSize;

@@ -1,5 +1,6 @@
 /** The poles of a form: the brackets in its denominators, term by term, told apart as physical and spurious (ENGINE section 5). */
 import type { FormAtN } from "../evaluate/form";
+import { cyclicRange, wrapLabel } from "../kinematics";
 import { enumerateBindings } from "../notation/bindings";
 import {
   cyclicPlaces,
@@ -31,19 +32,26 @@ import {
   meetPoint,
   type Point,
 } from "./brackets";
+import type { Divisor, FoundPole } from "./divisor";
+import { type Factor, factorsOf } from "./factoring";
 import type { Pole } from "./report";
-
-interface Divisor {
-  readonly text: string;
-  readonly physical: boolean;
-  readonly reference: boolean;
-}
+import { type PlainString, stringFactors, stringText } from "./strings";
 
 /** Formal order of an expression on each divisor, as written: negative in a denominator. A lower bound of the true valuation. */
 type Orders = ReadonlyMap<string, number>;
 
-/** Poles of all top-level terms, in order of first appearance; `terms` holds the indices of the terms with the bracket in a denominator. */
-export function findPoles(form: FormAtN): readonly Pole[] {
+/** Poles of all top-level terms, in order of first appearance, as they are reported before any order is measured. */
+export const findPoles = (form: FormAtN): readonly Pole[] => findDivisors(form).map(reported);
+
+export const reported = ({ divisor, terms }: FoundPole): Pole => ({
+  bracket: divisor.text,
+  kind: divisor.physical ? "physical" : "spurious",
+  reference: divisor.reference,
+  terms: [...terms],
+});
+
+/** The divisors of all top-level terms, in order of first appearance; `terms` holds the indices of the terms with one in a denominator. */
+export function findDivisors(form: FormAtN): readonly FoundPole[] {
   const finder = new PoleFinder(form);
   const poles = new Map<string, number[]>();
   let index = 0;
@@ -58,13 +66,8 @@ export function findPoles(form: FormAtN): readonly Pole[] {
   }
   return [...poles].map(([key, terms]) => {
     const divisor = finder.divisors.get(key);
-    if (divisor === undefined) throw new Error(`findPoles: no divisor ${key}`);
-    return {
-      bracket: divisor.text,
-      kind: divisor.physical ? "physical" : "spurious",
-      reference: divisor.reference,
-      terms,
-    };
+    if (divisor === undefined) throw new Error(`findDivisors: no divisor ${key}`);
+    return { divisor, terms };
   });
 }
 
@@ -74,6 +77,7 @@ class PoleFinder {
   readonly divisors = new Map<string, Divisor>();
   readonly #definitions: ReadonlyMap<string, Definition>;
   readonly #memo = new Map<string, Orders>();
+  readonly #factors = new Map<string, readonly Factor[]>();
 
   constructor(private readonly form: FormAtN) {
     this.#definitions = definitionsOf(form.formula);
@@ -129,20 +133,16 @@ class PoleFinder {
       case "square":
         return this.#square(e.left, e.right, at);
       case "string":
-        return this.#whole(
-          `${open[e.left]}${this.#end(e.first, at)}|${e.middle
-            .map((m) =>
-              momentumLegs(m, at.bindings, this.form.n, at.shift)
-                .sort((a, b) => a - b)
-                .join("+"),
-            )
-            .join("|")}|${this.#end(e.last, at)}${close[e.right]}`,
-          false,
-        );
+        return this.#string({
+          left: e.left,
+          first: this.#end(e.first, at),
+          middle: e.middle.map((momenta) => momentumLegs(momenta, at.bindings, this.form.n, at.shift)),
+          last: this.#end(e.last, at),
+        });
       case "mandelstam":
         return this.#mandelstam(momentumLegs(e.momenta, at.bindings, this.form.n, at.shift));
       case "distance":
-        return this.#fours([[...this.#dual(e.left, at), ...this.#dual(e.right, at)]], 1);
+        return this.#distance(e.left, e.right, at);
     }
   }
 
@@ -151,6 +151,16 @@ class PoleFinder {
     if (e.kind === "negate") return this.#denominator(e.operand, at);
     if (e.kind === "multiply")
       return e.factors.reduce<Orders>((total, f) => combined(total, this.#denominator(f, at), 1), none);
+    if (e.kind === "product")
+      return [...enumerateBindings(e, at.bindings)].reduce<Orders>(
+        (total, bindings) => combined(total, this.#denominator(e.body, { ...at, bindings }), 1),
+        none,
+      );
+    if (e.kind === "power") {
+      const power = Number(evaluateNumber(e.exponent, at.bindings));
+      // A denominator in a denominator is a numerator.
+      return power < 0 ? this.orders(e, at) : combined(none, this.#denominator(e.base, at), power);
+    }
     if (e.kind === "call") {
       const definition = this.#definitions.get(e.name);
       if (definition !== undefined)
@@ -160,7 +170,7 @@ class PoleFinder {
         );
     }
     if (e.kind === "add" || e.kind === "sum" || e.kind === "cyc" || e.kind === "sym")
-      return this.#whole(this.#sumText(e, at), false);
+      return this.#whole(this.#sumText(e, at), false, { written: { expression: e, place: at } });
     return this.orders(e, at);
   }
 
@@ -187,32 +197,89 @@ class PoleFinder {
     return orders;
   }
 
+  /** Between dual points of legs a component has the momentum that it is; elsewhere it is the bracket of the two lines. */
+  #distance(left: DualPoint, right: DualPoint, at: Place): Orders {
+    if (this.form.negativeLegs !== null && left.kind === "label" && right.kind === "label") {
+      const { n } = this.form;
+      const [i, j] = [left, right].map((end) => evaluateLabel(end.index, at.bindings, n, at.shift)) as [number, number];
+      if (i !== j) return this.#mandelstam(cyclicRange(n, i, j - 1));
+    }
+    return this.#fours([[...this.#dual(left, at), ...this.#dual(right, at)]], 1);
+  }
+
   #fours(brackets: readonly (readonly Point[])[], order: number): Orders {
     const total = new Map<string, number>();
     for (const points of brackets)
-      for (const factor of factorsOfFour(points)) {
-        const text = `<${itemsText(factor)}>`;
-        this.#note(text, isPhysicalFour(factor, this.form.n), holdsReference(factor));
-        total.set(text, (total.get(text) ?? 0) + order);
-      }
+      for (const whole of factorsOfFour(points))
+        for (const { points: factor, power, without } of this.#plain(whole)) {
+          const spinors = this.#consecutive(factor);
+          if (spinors !== null) {
+            for (const [text, times] of spinors) total.set(text, (total.get(text) ?? 0) + times * power * order);
+            continue;
+          }
+          const text = `<${itemsText(factor)}>`;
+          this.#note(text, {
+            physical: isPhysicalFour(factor, this.form.n),
+            reference: holdsReference(factor),
+            without: without.map((other) => ({ text: `<${itemsText(other.points)}>`, power: other.power })),
+          });
+          total.set(text, (total.get(text) ?? 0) + power * order);
+        }
     return total;
+  }
+
+  #plain(points: readonly Point[]): readonly Factor[] {
+    const key = itemsText(points);
+    const known = this.#factors.get(key);
+    if (known !== undefined) return known;
+    const factors = factorsOf(points);
+    this.#factors.set(key, factors);
+    return factors;
+  }
+
+  /** In a component <i-1 i i+1 i+2> is <i-1 i><i i+1><i+1 i+2>[i i+1]; null for any other bracket. */
+  #consecutive(points: readonly Point[]): Orders | null {
+    const { n, negativeLegs } = this.form;
+    if (negativeLegs === null || n === 4) return null;
+    const labels = points.flatMap((p) => (p.kind === "label" ? [p.label] : []));
+    if (labels.length !== 4) return null;
+    const first = labels.find((a) => [1, 2, 3].every((step) => labels.includes(wrapLabel(n, a + step))));
+    if (first === undefined) return null;
+    const [a, b, c, d] = [0, 1, 2, 3].map((step) => wrapLabel(n, first + step)) as [number, number, number, number];
+    return [this.#pair("<", a, b), this.#pair("<", b, c), this.#pair("<", c, d), this.#pair("[", b, c)].reduce(
+      (sum, one) => combined(sum, one, 1),
+      none,
+    );
+  }
+
+  /** <a b> or [a b]. */
+  #pair(bracket: "<" | "[", a: number, b: number): Orders {
+    const text = `${Math.min(a, b)} ${Math.max(a, b)}`;
+    return this.#whole(bracket === "<" ? `<${text}>` : `[${text}]`, adjacent(a, b, this.form.n));
   }
 
   #angle(points: readonly Point[]): Orders {
     const labels = points.flatMap((p) => (p.kind === "label" ? [p.label] : []));
     const [a, b] = labels;
     const physical = a !== undefined && b !== undefined && adjacent(a, b, this.form.n);
-    return this.#whole(`<${itemsText(points)}>`, physical, holdsReference(points));
+    return this.#whole(`<${itemsText(points)}>`, physical, { reference: holdsReference(points) });
   }
 
   #square(left: SpinorEnd, right: SpinorEnd, at: Place): Orders {
     const ends = [this.#end(left, at), this.#end(right, at)].sort((a, b) => Number(a) - Number(b));
     const [a, b] = ends.map(Number);
-    return this.#whole(
-      `[${ends.join(" ")}]`,
-      !ends.includes("*") && adjacent(a ?? 0, b ?? 0, this.form.n),
-      ends.includes("*"),
-    );
+    return this.#whole(`[${ends.join(" ")}]`, !ends.includes("*") && adjacent(a ?? 0, b ?? 0, this.form.n));
+  }
+
+  #string(whole: PlainString): Orders {
+    const factors = stringFactors(this.form.n, whole);
+    return factors.reduce<Orders>((total, string) => {
+      const [a, b] = [string.first, string.last].map(Number);
+      const physical = string.middle.length === 0 && adjacent(a ?? 0, b ?? 0, this.form.n);
+      // A string in one piece is shown as it was written first, whatever equal one it goes by.
+      const shown = factors.length === 1 ? { text: stringText(whole) } : {};
+      return combined(total, this.#whole(stringText(string), physical, shown), 1);
+    }, none);
   }
 
   /** s of legs S is s of the other legs too: the name is the shorter of the two, or the one that holds the lowest leg. */
@@ -221,17 +288,30 @@ class PoleFinder {
     const set = [...new Set(legs)].sort((a, b) => a - b);
     const rest = Array.from({ length: n }, (_, i) => i + 1).filter((a) => !set.includes(a));
     const shorter = set.length < rest.length || (set.length === rest.length && set[0] === 1) ? set : rest;
-    const jumps = shorter.filter((a, i) => !adjacent(a, shorter[(i + 1) % shorter.length] ?? 0, n)).length;
+    const [a, b] = shorter;
+    // s(a b) = <a b>[a b] is two divisors where spinors are the variables.
+    if (this.form.negativeLegs !== null && shorter.length === 2 && a !== undefined && b !== undefined)
+      return combined(this.#pair("<", a, b), this.#pair("[", a, b), 1);
+    const jumps = shorter.filter((c, i) => !adjacent(c, shorter[(i + 1) % shorter.length] ?? 0, n)).length;
     return this.#whole(`s(${shorter.join(" ")})`, shorter.length > 0 && jumps <= 1);
   }
 
-  #whole(text: string, physical: boolean, reference = text.includes("*")): Orders {
-    this.#note(text, physical, reference);
-    return new Map([[text, 1]]);
+  /** A divisor of order 1 under the key, which is its text unless `more` says otherwise. */
+  #whole(key: string, physical: boolean, more: Partial<Divisor> = {}): Orders {
+    this.#note(key, { physical, ...more });
+    return new Map([[key, 1]]);
   }
 
-  #note(text: string, physical: boolean, reference: boolean): void {
-    if (!this.divisors.has(text)) this.divisors.set(text, { text, physical, reference });
+  #note(key: string, known: Partial<Divisor>): void {
+    if (this.divisors.has(key)) return;
+    this.divisors.set(key, {
+      text: key,
+      physical: false,
+      reference: key.includes("*"),
+      without: [],
+      written: null,
+      ...known,
+    });
   }
 
   #end(end: SpinorEnd, at: Place): string {
@@ -300,9 +380,6 @@ class PoleFinder {
     }));
   }
 }
-
-const open = { angle: "<", square: "[" } as const;
-const close = { angle: ">", square: "]" } as const;
 
 function line(at: Place, loop: number): readonly Point[] {
   const moved = at.permutation[loop];

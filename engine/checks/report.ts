@@ -77,8 +77,12 @@ export const poleSchema = z.strictObject({
   reference: z.boolean(),
   /** Indices of the terms whose denominator holds the bracket. */
   terms: z.array(z.int()),
+  /** The highest order of the pole in any term; 1 is a simple pole. */
   orderInTerms: z.int().optional(),
+  /** The order of the pole of the sum: 0 none, negative a zero. */
   order: z.int().optional(),
+  /** For a spurious pole that cancels: its terms in the smallest groups found in each of which it cancels. */
+  groups: z.array(z.array(z.int())).optional(),
 });
 
 export const diagnosisSchema = z.strictObject({

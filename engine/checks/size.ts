@@ -9,11 +9,14 @@ import type { Bench } from "./bench";
 import { boundText, fewestSamples, missProbability, samplesNeeded } from "./bound";
 import { type DiagnosisCase, diagnose, drawProbes } from "./diagnosis";
 import { prepare } from "./evaluator";
+import { groundsOf } from "./ground";
 import { markChecks } from "./marks";
-import { findPoles } from "./poles";
+import { findDivisors, findPoles } from "./poles";
 import type { Comparison, Diagnosis, LeftOut, Mark, MarkCode, Pole, Target } from "./report";
 import { drawSamples, type Sampled } from "./sampling";
+import { prepareSeries } from "./seriesEvaluator";
 import { type Chosen, type Comparand, cheapestTruth, chooseTruths } from "./truth";
+import { measurePoles } from "./valuation";
 import { checkWeights } from "./weights";
 
 /** What was found at one n. */
@@ -84,8 +87,9 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
   if (!weights.homogeneousInEta || (weights.degree !== null && weights.degree !== degree))
     return withoutValue(form, diagnosing(null, []));
 
-  const poles = findPoles(form);
   const prepared = prepare(form);
+  const series = prepareSeries(form);
+  const ground = groundsOf(seed, form);
   const size = sizeBound(form);
   const own = missProbability(size, size);
   const { chosen, leftOut, cost } = chooseTruths(question, size, options.accepted, budget.left, options.sources);
@@ -96,11 +100,15 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
   options.step("values");
   const sampled = drawSamples(seed, prepared, chosen, samples);
   if ("span" in sampled) return { vanishing: sampled.span };
+  options.step("poles");
+  const poles = measurePoles(form, findDivisors(form), series, ground);
   const bench: Bench = {
     seed,
     form,
     target,
     prepared,
+    series,
+    ground,
     samples: sampled.samples,
     values: sampled.values,
     poles,

@@ -8,6 +8,7 @@ import { localPoles } from "./localPoles";
 import { loopExchange } from "./loopExchange";
 import { referenceIndependent } from "./referenceIndependent";
 import { reflection } from "./reflection";
+import { spuriousCancel } from "./spuriousCancel";
 
 export interface MarkCheck {
   readonly code: MarkCode;
@@ -40,4 +41,10 @@ export const markChecks: readonly MarkCheck[] = [
   },
   { code: "dualConformal", says: "is dual conformally invariant", constraint: true, run: dualConformal },
   { code: "localPoles", says: "has only physical poles in its denominators", constraint: false, run: localPoles },
+  {
+    code: "spuriousCancel",
+    says: "has no pole in its sum that is not physical",
+    constraint: true,
+    run: spuriousCancel,
+  },
 ];

@@ -3,7 +3,13 @@ import { type AcceptedForm, checkForm } from "../../../engine/checks";
 import { type Form, readEntryValue } from "../../../engine/notation";
 import { published } from "../../support/forms";
 
-function entry(notation: string, n: number | { from: number; to?: number }, k: number, loops = 0, more: Record<string, unknown> = {}): Form {
+function entry(
+  notation: string,
+  n: number | { from: number; to?: number },
+  k: number,
+  loops = 0,
+  more: Record<string, unknown> = {},
+): Form {
   const form = readEntryValue({ amplitude: { n, k, loops }, notation, ...more });
   if (!form.ok) throw new Error(form.diagnostics.map((d) => d.message).join("\n"));
   return form.value;
@@ -19,7 +25,10 @@ describe("the check agrees with published forms", () => {
     ["1012.6032: chiral pentagons", entry(published.pentagons, 5, 0, 1)],
     ["1012.6032: double pentagons", entry(published.doublePentagons, 4, 0, 2)],
     // Phys. Rev. Lett. 56 (1986) 2459
-    ["MHV gluons for every n", entry("<1 2>^4 / prod(i : 1 <= i <= n) <i i+1>", { from: 4, to: 7 }, 0, 0, { component: { minus: [1, 2] } })],
+    [
+      "MHV gluons for every n",
+      entry("<1 2>^4 / prod(i : 1 <= i <= n) <i i+1>", { from: 4, to: 7 }, 0, 0, { component: { minus: [1, 2] } }),
+    ],
     ["conjugate MHV gluons", entry("[4 5]^4 / ([1 2][2 3][3 4][4 5][5 1])", 5, 1, 0, { component: "---++" })],
   ])("%s", (_, form) => {
     const found = report(form);
@@ -49,18 +58,46 @@ describe("the check agrees with published forms", () => {
 describe("the check refuses", () => {
   const wrong: readonly (readonly [string, Form, object])[] = [
     ["an overall sign", entry("-[1 2 3 4 5]", 5, 1), { code: "constant-factor", factor: "-1" }],
-    ["a factor that floating point would not see", entry(`1${"0".repeat(29)}1/1${"0".repeat(30)} [1 2 3 4 5]`, 5, 1), { code: "constant-factor" }],
+    [
+      "a factor that floating point would not see",
+      entry(`1${"0".repeat(29)}1/1${"0".repeat(30)} [1 2 3 4 5]`, 5, 1),
+      { code: "constant-factor" },
+    ],
     ["one sign", entry("[1 2 3 4 5] - [1 2 3 5 6] + [1 3 4 5 6]", 6, 1), { code: "terms", negate: [1] }],
     ["a term too many", entry(`${published.nmhv6} + [1 2 3 4 6]`, 6, 1), { code: "terms", remove: [3] }],
     ["a form of fewer legs", entry(published.nmhv6, 7, 1), { code: "other-amplitude", key: "n6k1L0" }],
-    ["a bracket too many", entry("[1 2 3 4 5] <1 2 3 4>", 5, 1), { code: "bracket-factor", bracket: "<1 2 3 4>", power: 1 }],
+    [
+      "a bracket too many",
+      entry("[1 2 3 4 5] <1 2 3 4>", 5, 1),
+      { code: "bracket-factor", bracket: "<1 2 3 4>", power: 1 },
+    ],
     ["summands of different weight", entry("[1 2 3 4 5] + <1 2 3 4>[1 2 3 5 6]", 6, 1), { code: "weight", label: "1" }],
-    ["a missing vertex diagram", entry("sum(i, j : 1 <= i, i+1 < j < n) [* i i+1 j j+1]", 6, 1), { code: "reference-dependent" }],
-    ["a rotated component", entry("<2 3>^4 / (<1 2><2 3><3 4><4 5><5 1>)", 5, 0, 0, { component: "--+++" }), { code: "relabelled", shift: 4, reflected: false }],
+    [
+      "a missing vertex diagram",
+      entry("sum(i, j : 1 <= i, i+1 < j < n) [* i i+1 j j+1]", 6, 1),
+      { code: "reference-dependent" },
+    ],
+    [
+      "a rotated component",
+      entry("<2 3>^4 / (<1 2><2 3><3 4><4 5><5 1>)", 5, 0, 0, { component: "--+++" }),
+      { code: "relabelled", shift: 4, reflected: false },
+    ],
     ["exchanged labels", entry("[1 2 3 5 4] + [1 2 3 4 6] + [1 3 5 4 6]", 6, 1), { code: "relabelled" }],
-    ["the other convention", entry("-[4 5]^4 / ([1 2][2 3][3 4][4 5][5 1])", 5, 1, 0, { component: "---++" }), { code: "other-convention" }],
-    ["a sum over the loop lines taken twice", entry(`sym(${published.doublePentagons})`, 4, 0, 2), { code: "constant-factor", factor: "2" }],
-    ["dependence on the points of a line", entry("<1 2 3 4>^2 <A 1 2 3><B 1 2 4> / (<AB 1 2>^2 <AB 2 3><AB 3 4><AB 1 4> <1 2 3 4>)", 4, 0, 1), {}],
+    [
+      "the other convention",
+      entry("-[4 5]^4 / ([1 2][2 3][3 4][4 5][5 1])", 5, 1, 0, { component: "---++" }),
+      { code: "other-convention" },
+    ],
+    [
+      "a sum over the loop lines taken twice",
+      entry(`sym(${published.doublePentagons})`, 4, 0, 2),
+      { code: "constant-factor", factor: "2" },
+    ],
+    [
+      "dependence on the points of a line",
+      entry("<1 2 3 4>^2 <A 1 2 3><B 1 2 4> / (<AB 1 2>^2 <AB 2 3><AB 3 4><AB 1 4> <1 2 3 4>)", 4, 0, 1),
+      {},
+    ],
     ["zero", entry("[1 2 3 4 5] - [1 2 3 4 5]", 6, 1), {}],
   ];
   it.each(wrong)("%s", (_, form, finding) => {
@@ -89,7 +126,10 @@ describe("the check", () => {
 
   it("compares with accepted forms, and with them alone where there is no source", () => {
     const six: AcceptedForm = { name: "n6k1L0-1v1", form: entry(published.nmhv6, 6, 1) };
-    const found = report(entry("(1/2) cyc([1 2 3 4 5])", 6, 1), [six, { name: "n5k1L0-1v1", form: entry("[1 2 3 4 5]", 5, 1) }]);
+    const found = report(entry("(1/2) cyc([1 2 3 4 5])", 6, 1), [
+      six,
+      { name: "n5k1L0-1v1", form: entry("[1 2 3 4 5]", 5, 1) },
+    ]);
     expect(found.comparisons.map((c) => c.with)).toContain("n6k1L0-1v1");
     expect(found.comparisons.map((c) => c.with)).not.toContain("n5k1L0-1v1");
     const alone = checkForm(entry(published.nmhv6, 6, 1), { seed: "test", sources: [] });

@@ -1,0 +1,129 @@
+/**
+ * Brackets with meets, taken apart into plain brackets where they are products of them: in
+ * <6 7 8 (3 4) cap (7 p q)> with p, q in the plane (7 8 1) the whole plane (7 p q) is that plane, which no rule on
+ * the letters sees. A plain bracket <a b c d> is irreducible, so it divides whatever vanishes at a random point with <a b c d> = 0.
+ */
+import { type Field, randomness, smallPrimeField } from "../fields";
+import { type PrimeSeries, primeSeries, valuationOf } from "../fields/primeSeries";
+import {
+  type Line,
+  lineBracket,
+  lineThrough,
+  meetOfLineAndPlane,
+  meetOfPlanes,
+  type Plane,
+  planeOf,
+  planeThrough,
+  type Twistor,
+} from "../kinematics";
+import { type Point, pointText } from "./brackets";
+
+/** A factor of a bracket with its power. What is no product of plain brackets is the bracket divided by those `without` names. */
+export interface Factor {
+  readonly points: readonly Point[];
+  readonly power: number;
+  readonly without: readonly { readonly points: readonly Point[]; readonly power: number }[];
+}
+
+/** Factors are found modulo this prime at random points: all that matters is that they were not chosen. */
+const field = smallPrimeField(2147483647);
+/** A plain bracket in a product of brackets that people write stands there to a power below this. */
+const seriesTerms = 8;
+
+/** The factors of a bracket of four points; a bracket without meets is its own. */
+export function factorsOf(points: readonly Point[]): readonly Factor[] {
+  if (!points.some((p) => p.kind === "meet" || p.kind === "planes")) return [{ points, power: 1, without: [] }];
+  const weights = new Map<string, number>();
+  const atoms = new Map<string, Point>();
+  for (const atom of points.flatMap(atomsOf)) {
+    const name = pointText(atom);
+    atoms.set(name, atom);
+    weights.set(name, (weights.get(name) ?? 0) + 1);
+  }
+  const names = [...atoms.keys()].sort();
+  const random = randomness(`factors|${names.join(" ")}`);
+  const draw = (): number => Number(random.below(field.characteristic));
+  const drawn = new Map(names.map((name) => [name, [draw(), draw(), draw(), draw()] as Twistor<number>]));
+  const at = (name: string): Twistor<number> => drawn.get(name)!;
+  const mixing = [draw(), draw(), draw()];
+  const direction: Twistor<number> = [draw(), draw(), draw(), draw()];
+
+  const factors: Factor[] = [];
+  let left = [...weights.values()].reduce((a, b) => a + b, 0);
+  for (const four of subsets(names)) {
+    if (left === 0) break;
+    const [a, b, c, d] = four as [string, string, string, string];
+    if (four.some((name) => (weights.get(name) ?? 0) === 0)) continue;
+    const inPlane = [0, 1, 2, 3].map((i) =>
+      [a, b, c].reduce((sum, name, j) => field.add(sum, field.multiply(mixing[j]!, at(name)[i]!)), 0),
+    );
+    const value = bracketAt(field, points, (name) => (name === d ? inPlane : at(name)));
+    if (value !== 0) continue;
+    const series = primeSeries(field, seriesTerms);
+    const moving = inPlane.map((x, i) => series.linear(x, direction[i]!));
+    const power = valuationOf(bracketAt<PrimeSeries>(series, points, (name) => (name === d ? moving : at(name))));
+    // A bracket that vanishes everywhere has every factor: it is left whole, and its zero is found where it is evaluated.
+    if (power === null || !Number.isFinite(power)) return [{ points, power: 1, without: [] }];
+    factors.push({ points: four.map((name) => atoms.get(name)!), power, without: [] });
+    for (const name of four) weights.set(name, (weights.get(name) ?? 0) - power);
+    left -= 4 * power;
+  }
+  return left === 0 ? factors : [...factors, { points, power: 1, without: factors }];
+}
+
+function* subsets(names: readonly string[]): Generator<readonly string[]> {
+  const m = names.length;
+  for (let a = 0; a < m; a++)
+    for (let b = a + 1; b < m; b++)
+      for (let c = b + 1; c < m; c++)
+        for (let d = c + 1; d < m; d++) yield [names[a]!, names[b]!, names[c]!, names[d]!];
+}
+
+function atomsOf(p: Point): readonly Point[] {
+  if (p.kind === "meet") return [...p.line, ...p.plane].flatMap(atomsOf);
+  // The two formal points of a line of two planes hold its six points once.
+  if (p.kind === "planes") return p.which === 0 ? [...p.left, ...p.right].flatMap(atomsOf) : [];
+  return [p];
+}
+
+/** <a b c d> with every atom (leg, loop point, reference) where `at` puts it. */
+function bracketAt<T>(ring: Field<T>, points: readonly Point[], at: (name: string) => Twistor<T>): T {
+  const pairs = pairsOf(points);
+  const lines = pairs.map((pair) => lineOf(ring, pair, at));
+  return lineBracket(ring, lines[0]!, lines[1]!);
+}
+
+/** Four points as two lines, the formal points of one line of two planes together. */
+function pairsOf(points: readonly Point[]): readonly (readonly Point[])[] {
+  const formal = points.filter((p) => p.kind === "planes");
+  const others = points.filter((p) => p.kind !== "planes");
+  const sorted = [...formal.filter((p) => p.which === 0).flatMap((p) => partners(formal, p)), ...others];
+  return [sorted.slice(0, 2), sorted.slice(2)];
+}
+
+const partners = (formal: readonly Point[], p: Point): readonly Point[] => [
+  p,
+  ...formal.filter((q) => q.kind === "planes" && p.kind === "planes" && q.which === 1 && q.text === p.text).slice(0, 1),
+];
+
+function lineOf<T>(ring: Field<T>, pair: readonly Point[], at: (name: string) => Twistor<T>): Line<T> {
+  const [p, q] = pair;
+  if (p?.kind === "planes")
+    return meetOfPlanes(ring, planeOfPoints(ring, p.left, at), planeOfPoints(ring, p.right, at));
+  return lineThrough(ring, twistorOf(ring, p!, at), twistorOf(ring, q!, at));
+}
+
+function planeOfPoints<T>(ring: Field<T>, points: readonly Point[], at: (name: string) => Twistor<T>): Plane<T> {
+  const formal = points.filter((p) => p.kind === "planes");
+  if (formal.length > 0) {
+    const other = points.find((p) => p.kind !== "planes");
+    return planeOf(ring, lineOf(ring, formal, at), twistorOf(ring, other!, at));
+  }
+  const [a, b, c] = points.map((p) => twistorOf(ring, p, at));
+  return planeThrough(ring, a!, b!, c!);
+}
+
+function twistorOf<T>(ring: Field<T>, p: Point, at: (name: string) => Twistor<T>): Twistor<T> {
+  if (p.kind !== "meet") return at(pointText(p));
+  return meetOfLineAndPlane(ring, lineOf(ring, p.line, at), planeOfPoints(ring, p.plane, at));
+}
