@@ -1,9 +1,9 @@
-/** The one place where the checks evaluate a form: batches of samples in, one outcome each out. */
-import { evaluateForm } from "../evaluate";
+/** The one place where the checks evaluate a form: it is compiled to a tape, and batches of samples go through the kernel. */
 import type { FormAtN } from "../evaluate/form";
-import { type Field, randomness, smallPrimeField } from "../fields";
-import { type Point, randomPoint } from "../kinematics";
-import type { Span } from "../result";
+import type { Field } from "../fields";
+import type { Point } from "../kinematics";
+import type { Diagnostic, Span } from "../result";
+import { compile, evaluateTape, type Tape } from "../tape";
 
 /** A point modulo a prime of 31 bits; residues in 0..prime-1. */
 export interface Sample {
@@ -18,49 +18,34 @@ export type Outcome =
 
 export interface PreparedForm {
   readonly form: FormAtN;
-  /** Field operations for one sample. */
+  /** Field multiplications for one sample. */
   readonly operations: number;
   evaluate(samples: readonly Sample[]): readonly Outcome[];
 }
 
-export const evaluatorName = "tree walker, a 31-bit prime for each point";
+export const evaluatorName = "WebAssembly SIMD tape, a 31-bit prime for each point";
 
+/** A form whose tape would be larger than the limits: a fault of the input, with its place. */
+export class FormTooLarge extends Error {
+  constructor(readonly diagnostics: readonly Diagnostic[]) {
+    super(diagnostics[0]?.message ?? "the form is too large");
+  }
+}
+
+/** Compiles a form that was validated for its n, k and loops. @throws FormTooLarge; KernelUnavailable at the first evaluation */
 export function prepare(form: FormAtN): PreparedForm {
-  let operations: number | null = null;
+  const compiled = compile(form);
+  if (!compiled.ok) throw new FormTooLarge(compiled.diagnostics);
+  const tape: Tape = compiled.value;
   return {
     form,
-    get operations() {
-      operations ??= countOperations(form);
-      return operations;
-    },
-    evaluate: (samples) =>
-      samples.map(({ field, point }) => {
-        const evaluation = evaluateForm(field, form, point);
-        return evaluation.kind === "value"
-          ? { kind: "value", sum: evaluation.sum, terms: evaluation.terms }
-          : { kind: "zero-denominator", span: evaluation.span };
-      }),
+    operations: tape.counts.multiplications,
+    evaluate: (samples) => (samples.length === 0 ? [] : evaluated(tape, samples)),
   };
 }
 
-/** Additions, multiplications and inversions of one evaluation, counted by carrying it out at a point. */
-function countOperations(form: FormAtN): number {
-  const field = smallPrimeField(2 ** 31 - 1);
-  let count = 0;
-  const counted =
-    <A extends readonly unknown[], R>(operation: (...args: A) => R) =>
-    (...args: A): R => {
-      count += 1;
-      return operation(...args);
-    };
-  const counting: Field<number> = {
-    ...field,
-    add: counted(field.add),
-    subtract: counted(field.subtract),
-    multiply: counted(field.multiply),
-    negate: counted(field.negate),
-    inverse: counted(field.inverse),
-  };
-  evaluateForm(counting, form, randomPoint(field, form, randomness("operations")));
-  return count;
+function evaluated(tape: Tape, samples: readonly Sample[]): readonly Outcome[] {
+  const { values } = evaluateTape(tape, samples, { terms: true });
+  if (values === null) throw new Error("prepare: an evaluation that nobody cancelled was cancelled");
+  return values.map((v) => (v.kind === "value" ? { kind: "value", sum: v.sum, terms: v.terms ?? [] } : v));
 }

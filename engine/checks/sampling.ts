@@ -23,8 +23,8 @@ export interface VanishingDenominator {
 const drawsBeforeGivingUp = 8;
 
 /**
- * `count` samples, drawn in order, bad points left out.
- * @returns where the first `drawsBeforeGivingUp` draws are all bad for the form, the denominator that vanished at the last one.
+ * `count` samples, drawn in order and evaluated in rounds of as many as are missing; bad points are left out.
+ * @returns where the first round of draws is bad for the form at every point, the denominator that vanished.
  * @throws Error where a comparand has no value at many points at which the form has: a fault of the program.
  */
 export function drawSamples(
@@ -32,7 +32,6 @@ export function drawSamples(
   prepared: PreparedForm,
   chosen: readonly Chosen[],
   count: number,
-  onProgress: (done: number) => void = () => {},
 ): Sampled | VanishingDenominator {
   const kept = {
     samples: [] as Sample[],
@@ -40,34 +39,66 @@ export function drawSamples(
     values: [] as Value[],
     truths: chosen.map(() => [] as number[]),
   };
+  let draw = 0;
   let badForTruth = 0;
-  for (let draw = 0; kept.samples.length < count; draw++) {
-    const sample = drawSample(seed, "sample", prepared.form, draw);
-    const [outcome] = prepared.evaluate([sample]);
-    if (outcome === undefined) throw new Error("drawSamples: no outcome for a sample");
-    if (outcome.kind === "zero-denominator") {
-      if (kept.samples.length === 0 && draw + 1 >= drawsBeforeGivingUp) return { span: outcome.span };
-      if (draw > 4 * count + 4 * drawsBeforeGivingUp) return { span: outcome.span };
-      continue;
-    }
-    const asked = chosen.filter((c) => c.samples > kept.samples.length);
-    const truths = asked.map((c) => c.comparand.evaluate([sample])[0] ?? null);
-    if (truths.includes(null)) {
-      badForTruth += 1;
-      if (badForTruth > 2 * count + drawsBeforeGivingUp) {
-        const name = asked[truths.indexOf(null)]?.comparand.name;
-        throw new Error(`drawSamples: ${name} has no value at ${badForTruth} random points`);
-      }
-      continue;
-    }
-    kept.samples.push(sample);
-    kept.draws.push(draw);
-    kept.values.push(outcome);
-    asked.forEach((c, i) => {
-      const value = truths[i];
-      if (value !== null && value !== undefined) kept.truths[chosen.indexOf(c)]?.push(value);
+  while (kept.samples.length < count) {
+    const missing = kept.samples.length === 0 ? Math.max(count, drawsBeforeGivingUp) : count - kept.samples.length;
+    const round = Array.from({ length: missing }, () => ({
+      draw,
+      sample: drawSample(seed, "sample", prepared.form, draw++),
+    }));
+    const outcomes = prepared.evaluate(round.map((r) => r.sample));
+    const good = round.flatMap((r, i) => {
+      const outcome = outcomes[i];
+      return outcome?.kind === "value" ? [{ ...r, value: outcome }] : [];
     });
-    onProgress(kept.samples.length);
+    const [bad] = outcomes.filter((o) => o.kind === "zero-denominator");
+    if (bad !== undefined && (kept.samples.length === 0 ? good.length === 0 : draw > 8 * count))
+      return { span: bad.span };
+    const truths = chosen.map((c) =>
+      truthsOf(
+        c,
+        good.map((g) => g.sample),
+        kept.samples.length,
+      ),
+    );
+    for (const [i, candidate] of good.entries()) {
+      if (kept.samples.length === count) break;
+      const asked = chosen.flatMap((c, at) => (c.samples > kept.samples.length ? [at] : []));
+      const found = asked.map((at) => truths[at]?.(i) ?? null);
+      const nameless = found.indexOf(null);
+      if (nameless >= 0) {
+        badForTruth += 1;
+        if (badForTruth > 2 * count + drawsBeforeGivingUp)
+          throw new Error(
+            `drawSamples: ${chosen[asked[nameless] ?? 0]?.comparand.name} has no value at ${badForTruth} random points`,
+          );
+        continue;
+      }
+      kept.samples.push(candidate.sample);
+      kept.draws.push(candidate.draw);
+      kept.values.push(candidate.value);
+      asked.forEach((at, j) => {
+        kept.truths[at]?.push(found[j] ?? 0);
+      });
+    }
   }
   return kept;
+}
+
+/**
+ * Values of a comparand at the candidates of one round. Those it is sure to be asked for are found together; later ones, which take the
+ * place of rejected points, one by one.
+ */
+function truthsOf(
+  { comparand, samples }: Chosen,
+  candidates: readonly Sample[],
+  kept: number,
+): (index: number) => number | null {
+  const together = comparand.evaluate(candidates.slice(0, Math.max(0, samples - kept)));
+  return (index) => {
+    const candidate = candidates[index];
+    if (index < together.length) return together[index] ?? null;
+    return candidate === undefined ? null : (comparand.evaluate([candidate])[0] ?? null);
+  };
 }
