@@ -10,6 +10,7 @@ import {
   definitionsOf,
   type Extent,
   type Place,
+  permutations,
   startingPlace,
   symmetricPlaces,
 } from "./expand";
@@ -80,7 +81,7 @@ class Walker {
     const known = this.shapes.get(expression);
     if (known !== undefined) return known;
     let nodes = 1;
-    let fixed = !["call", "sum", "product", "cyc", "sym"].includes(expression.kind);
+    let fixed = !["call", "sum", "product"].includes(expression.kind);
     for (const inner of innerExpressions(expression)) {
       const shape = this.shape(inner);
       nodes += shape.nodes;
@@ -100,6 +101,9 @@ class Walker {
           : isBare(momentum.from) && isBare(momentum.to),
       );
     }
+    // All images cost the same; nested ones multiply up here without being gone through.
+    if (expression.kind === "cyc") nodes *= this.extent.n;
+    if (expression.kind === "sym") nodes *= permutations(this.extent.loops).length;
     const shape = { nodes, fixed };
     this.shapes.set(expression, shape);
     return shape;
@@ -133,6 +137,9 @@ class Walker {
         return expression.summands.reduce((highest, summand) => Math.max(highest, of(summand)), 0);
       case "negate":
         return of(expression.operand);
+      case "cyc":
+      case "sym":
+        return of(expression.body);
       case "multiply":
         return this.degree(
           expression.factors.reduce((sum, factor) => sum + of(factor), 0),
@@ -188,7 +195,8 @@ class Walker {
 
   /** One use of a definition; its body is gone through at the first use with these arguments at this place. */
   private use(name: string, values: readonly IndexExpression[], place: Place): number {
-    this.take(4 + 4 * values.length);
+    // Arguments and a key are made anew at each use, which takes longer than a step of arithmetic.
+    this.take(20 + 4 * values.length);
     const definition = this.definitions.get(name)!;
     const at = definitionPlace(definition, values, place, this.extent.n);
     const key = `${name}(${definition.parameters.map((parameter) => at.bindings.get(parameter)).join()})${at.shift}:${at.permutation.join("")}`;
@@ -231,12 +239,10 @@ class Walker {
     return degree;
   }
 
-  /** The images that `cyc` or `sym` adds up. */
+  /** The images that `cyc` or `sym` adds up, of a body that is not the same at all of them. */
   private images(body: Expression, places: readonly Place[]): number {
-    const { nodes, fixed } = this.shape(body);
-    if (!fixed) return places.reduce((most, at) => Math.max(most, this.walk(body, at)), 0);
-    this.take(places.length * nodes);
-    return this.fixedDegree(body, places[0]!);
+    this.take(4 * places.length);
+    return places.reduce((most, at) => Math.max(most, this.walk(body, at)), 0);
   }
 
   /** The size of an exponent at this place; one that is too large is reported. */
