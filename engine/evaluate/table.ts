@@ -165,6 +165,9 @@ export function valuesOf({ form, source, numbers, helicities }: ValueRequest): R
     if (!at.ok) return at;
     wanted.push(at.value);
   }
+  // Counted before ten thousand points are drawn for nothing.
+  if (source.kind === "random" && source.count * wanted.length > mostValues)
+    return tooMany(source.count, wanted.length);
   const onlyComponents = wanted.every((negativeLegs) => negativeLegs !== null);
   const own = pointUse(form);
   const use = onlyComponents ? { ...own, twistors: true, chi: false, referenceChi: false } : own;

@@ -3,7 +3,7 @@
  *
  * Spinors of p are lambda and lambdatilde with p = lambda lambdatilde, free up to lambda -> t lambda, lambdatilde -> lambdatilde/t.
  * Here t is fixed as follows, and with it the phase of every amplitude (a leg of helicity -1 takes t^2, one of +1 takes 1/t^2):
- * - doubles: both have the same length, and the first component of lambda that is not zero is positive. For real momenta in (1,3)
+ * - doubles: both have the same length, and the first component of lambda that is not zero (above 2^-200 of the other) is positive. For real momenta in (1,3)
  *   then lambdatilde = +conj(lambda) for positive energy and -conj(lambda) for negative: p and -p share lambda, and
  *   lambdatilde changes sign. So |<a b>|^2 = |s(a b)|.
  * - exact numbers: the first component of lambda that is not zero is 1; no square root is needed.
@@ -39,6 +39,9 @@ export function rationalSpinors<T>(field: Field<T>, p: Momentum<T>): LegSpinors<
 
 const length = ([a, b]: Spinor<Complex<number>>): number => Math.hypot(a.re, a.im, b.re, b.im);
 
+/** A first component of lambda below this share of the second is zero: its phase would be that of a rounding error. */
+const NOTHING = 2 ** -200;
+
 /**
  * The spinors of equal length with first non-zero component of lambda positive; null for the zero matrix. They are read off the row
  * and the column of the largest entry, so that a small deviation of det p from zero stays small in both.
@@ -56,7 +59,7 @@ export function balancedSpinors(p: Momentum<Complex<number>>): LegSpinors<Comple
   if (pivot === null) return null;
   const lambda = column(p, col);
   const tilde: Spinor<Complex<number>> = [multiply(p[row][0], pivot), multiply(p[row][1], pivot)];
-  const lead = magnitude(lambda[0]) === 0 ? lambda[1] : lambda[0];
+  const lead = magnitude(lambda[0]) <= NOTHING * magnitude(lambda[1]) ? lambda[1] : lambda[0];
   const scale = Math.sqrt(length(tilde) / length(lambda));
   const size = magnitude(lead);
   const turn = { re: (scale * lead.re) / size, im: (-scale * lead.im) / size };
