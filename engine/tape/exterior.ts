@@ -113,6 +113,32 @@ export class Exterior {
     return { kind: "sum", degree: first!.degree, coefficients, products };
   }
 
+  /**
+   * The product of any number of elements. Numbers, and the coefficients of factors that are one product of deltas, are multiplied
+   * first, in the order of their nodes: equal products are then shared however they are written.
+   */
+  product(factors: readonly Element[]): Element {
+    const numbers: Ref[] = [];
+    let deltas: number | null = NO_DELTAS;
+    let degree = 0;
+    let rest: Element | null = null;
+    for (const factor of factors) {
+      const [part] = factor;
+      if (factor.length === 1 && part!.kind === "sum" && part!.products.length === 1) {
+        numbers.push(part!.coefficients[0]!);
+        degree += part!.degree;
+        if (deltas !== null && degree <= this.k) deltas = this.union(deltas, part!.products[0]!);
+      } else rest = rest === null ? factor : this.multiply(rest, factor);
+    }
+    if (deltas === null || degree > this.k) return this.zero;
+    numbers.sort((a, b) => a - b);
+    let coefficient = this.graph.one;
+    for (const number of numbers) coefficient = this.graph.multiply(coefficient, number);
+    if (coefficient === this.graph.zero) return this.zero;
+    const simple = this.close({ kind: "sum", degree, coefficients: [coefficient], products: [deltas] });
+    return rest === null ? simple : this.multiply(rest, simple);
+  }
+
   multiply(a: Element, b: Element): Element {
     const products: Element[] = [];
     for (const x of a) {
@@ -168,6 +194,8 @@ export class Exterior {
 
   /** The product of two products of deltas, or null where a delta stands in both: its square is zero. */
   private union(p: number, q: number): number | null {
+    if (p === NO_DELTAS) return q;
+    if (q === NO_DELTAS) return p;
     const { words, starts } = this.products;
     const [endP, endQ] = [starts[p + 1]!, starts[q + 1]!];
     let [i, j, length] = [starts[p]!, starts[q]!, 0];
@@ -181,7 +209,7 @@ export class Exterior {
 
   /** Elements of degree k are one number. */
   private close(a: FormalSum): Element {
-    if (a.degree < this.k) return [a];
+    if (a.degree < this.k || this.k === 0) return [a];
     let sum = this.graph.zero;
     a.products.forEach((product, i) => {
       sum = this.graph.add(sum, this.graph.multiply(a.coefficients[i]!, this.top(product)));

@@ -10,6 +10,8 @@ export interface KernelField<T, P> {
   /** Writes what the vectors of the context say of one lane: modulus, helper, one. */
   writeContext(memory: DataView, at: number, lane: number, parameter: P): void;
   write(memory: DataView, at: number, x: T): void;
+  /** Writes numbers `stride` bytes apart. */
+  writeRow(memory: DataView, at: number, stride: number, row: readonly T[]): void;
   read(memory: DataView, at: number): T;
   /** An exact constant, or null where its denominator vanishes. */
   constant(numerator: bigint, denominator: bigint, parameter: P): T | null;
@@ -50,6 +52,9 @@ function inverseOfOdd(p: number): number {
 const words = {
   lanes: 4,
   write: (memory: DataView, at: number, x: number): void => memory.setUint32(at, x, true),
+  writeRow: (memory: DataView, at: number, stride: number, row: readonly number[]): void => {
+    for (let i = 0; i < row.length; i++) memory.setUint32(at + i * stride, row[i]!, true);
+  },
   read: (memory: DataView, at: number): number => memory.getUint32(at, true),
   zero: 0,
   one: 1,
@@ -64,7 +69,12 @@ export const mersenne31: KernelField<number, number> = {
   ...words,
   name: "integers modulo 2^31-1",
   run: (kernel, code, end) => kernel.runMersenne31(code, end),
-  writeContext: () => {},
+  writeContext: (memory, at, lane) => {
+    memory.setUint32(at + 4 * lane, MERSENNE_31, true);
+    // 64 bits wide: every other word is zero.
+    memory.setUint32(at + 16 + 4 * lane, lane % 2 === 0 ? MERSENNE_31 : 0, true);
+    memory.setUint32(at + 32 + 4 * lane, 1, true);
+  },
   constant: constant31,
   entry: null,
 };
@@ -88,8 +98,15 @@ export const mersenne61: KernelField<bigint, null> = {
   name: "integers modulo 2^61-1",
   lanes: 2,
   run: (kernel, code, end) => kernel.runMersenne61(code, end),
-  writeContext: () => {},
+  writeContext: (memory, at, lane) => {
+    memory.setBigUint64(at + 8 * lane, P61, true);
+    memory.setBigUint64(at + 16 + 8 * lane, BigInt(MERSENNE_31), true);
+    memory.setBigUint64(at + 32 + 8 * lane, 1n, true);
+  },
   write: (memory, at, x) => memory.setBigUint64(at, x, true),
+  writeRow: (memory, at, stride, row) => {
+    for (let i = 0; i < row.length; i++) memory.setBigUint64(at + i * stride, row[i]!, true);
+  },
   read: (memory, at) => memory.getBigUint64(at, true),
   constant: (numerator, denominator) => quotient(numerator, denominator, P61),
   zero: 0n,
@@ -110,6 +127,9 @@ export const real: KernelField<number, null> = {
   run: (kernel, code, end) => kernel.runReal(code, end),
   writeContext: () => {},
   write: (memory, at, x) => memory.setFloat64(at, x, true),
+  writeRow: (memory, at, stride, row) => {
+    for (let i = 0; i < row.length; i++) memory.setFloat64(at + i * stride, row[i]!, true);
+  },
   read: (memory, at) => memory.getFloat64(at, true),
   constant: toDouble,
   zero: 0,
@@ -128,6 +148,12 @@ export const complex: KernelField<Complex, null> = {
   write: (memory, at, [re, im]) => {
     memory.setFloat64(at, re, true);
     memory.setFloat64(at + 8, im, true);
+  },
+  writeRow: (memory, at, stride, row) => {
+    row.forEach((x, i) => {
+      memory.setFloat64(at + i * stride, x[0], true);
+      memory.setFloat64(at + i * stride + 8, x[1], true);
+    });
   },
   read: (memory, at) => [memory.getFloat64(at, true), memory.getFloat64(at + 8, true)],
   constant: (numerator, denominator) => [toDouble(numerator, denominator), 0],

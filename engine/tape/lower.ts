@@ -95,7 +95,7 @@ export class Lowering {
       case "negate":
         return exterior.negate(this.value(expression.operand, place));
       case "multiply":
-        return this.product(expression.factors.map((factor) => this.value(factor, place)));
+        return exterior.product(expression.factors.map((factor) => this.value(factor, place)));
       case "divide": {
         const numerator = this.value(expression.numerator, place);
         const inverse = this.inverse(this.value(expression.denominator, place), expression.denominator.span);
@@ -109,7 +109,7 @@ export class Lowering {
         for (const bindings of enumerateBindings(expression, place.bindings)) {
           values.push(this.value(expression.body, { ...place, bindings }));
         }
-        return expression.kind === "sum" ? exterior.add(values) : this.product(values);
+        return expression.kind === "sum" ? exterior.add(values) : exterior.product(values);
       }
       case "cyc":
         return exterior.add(cyclicPlaces(place, form.n).map((at) => this.value(expression.body, at)));
@@ -133,21 +133,6 @@ export class Lowering {
       default:
         return exterior.scalar(this.bracket(expression, place));
     }
-  }
-
-  /** The product: numbers first, in the order of their nodes, so that equal products are shared however they are written. */
-  private product(factors: readonly Element[]): Element {
-    const { exterior, graph } = this;
-    const numbers: Ref[] = [];
-    let product: Element | null = null;
-    for (const factor of factors) {
-      const number = exterior.asScalar(factor);
-      if (number !== null) numbers.push(number);
-      else product = product === null ? factor : exterior.multiply(product, factor);
-    }
-    numbers.sort((a, b) => a - b);
-    const coefficient = exterior.scalar(numbers.reduce((a, b) => graph.multiply(a, b), graph.one));
-    return product === null ? coefficient : exterior.multiply(product, coefficient);
   }
 
   /** 1/denominator; an element with deltas has no inverse, and counts as a zero at every point. */

@@ -12,8 +12,12 @@ import { HEAD, runsOf, type Tape } from "./tape";
 /** Vectors of a block at most. */
 const MOST_VECTORS = 16;
 
-/** A block's slots should fit the second-level cache: fewer points go at a time where a tape has many slots. */
+/** A block's slots should fit the second-level cache: fewer points go at a time where a tape has many slots, ... */
 const BLOCK_BYTES = 1 << 20;
+
+/** ... but four vectors at least, so that a tape is read once for 16 points, unless memory is short. */
+const FEW_VECTORS = 4;
+const MOST_BYTES = 1 << 28;
 
 const NO_DENOMINATOR = 0xffffffff;
 
@@ -52,6 +56,12 @@ export function sliceExtent(tape: Tape): { words: number; terms: number } {
   return { words, terms };
 }
 
+function vectorsOfBlock(slots: number): number {
+  const bytes = 16 * Math.max(1, slots);
+  if (FEW_VECTORS * bytes > MOST_BYTES) return 1;
+  return Math.max(FEW_VECTORS, Math.min(MOST_VECTORS, Math.floor(BLOCK_BYTES / bytes)));
+}
+
 /** Runs the tape at all samples; yields between slices, where a caller may stop. Values come back in the order of the samples. */
 export function* runTape<T, P>(
   kernel: Kernel,
@@ -62,7 +72,7 @@ export function* runTape<T, P>(
 ): Generator<Progress, PointValue<T>[]> {
   const extent = sliceExtent(tape);
   const values: PointValue<T>[] = [];
-  const fitting = Math.max(1, Math.min(MOST_VECTORS, Math.floor(BLOCK_BYTES / (16 * Math.max(1, tape.slots)))));
+  const fitting = vectorsOfBlock(tape.slots);
   const slicesPerBlock = tape.slices.length - 1;
   const blocks: (readonly Sample<T, P>[])[] = [];
   const size = fitting * field.lanes;
@@ -144,7 +154,8 @@ export class BlockRun<T, P> {
       for (const input of tape.inputs) {
         let address = at.slots + input.slot * stride + offset;
         for (const row of readInput(input, point, field.zero, field.one)) {
-          for (let i = 0; i < row.length; i++, address += stride) field.write(view, address, row[i]!);
+          field.writeRow(view, address, stride, row);
+          address += stride * row.length;
         }
         given = Math.max(given, input.slot + input.width);
       }

@@ -57,6 +57,15 @@ export function dot3(a: v128, b: v128, c: v128, d: v128, e: v128, f: v128, p: v1
 }
 
 @inline
+export function dot5(
+  a0: v128, b0: v128, a1: v128, b1: v128, a2: v128, b2: v128,
+  a3: v128, b3: v128, a4: v128, b4: v128,
+  p: v128, q: v128,
+): v128 {
+  return add(dot3(a0, b0, a1, b1, a2, b2, p, q), dot2(a3, b3, a4, b4, p, q), p, q);
+}
+
+@inline
 export function dot6(
   a0: v128, b0: v128, a1: v128, b1: v128, a2: v128, b2: v128,
   a3: v128, b3: v128, a4: v128, b4: v128, a5: v128, b5: v128,

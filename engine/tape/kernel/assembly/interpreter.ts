@@ -1,12 +1,14 @@
 // The tape interpreter, written once for all fields: the build puts each field's file in the place of "./field".
 // A run is [opcode, count, parameter, 0] and its entries; see opcodes.ts for what they hold.
 
-import { BATCHED, LANES, add, dot2, dot3, dot6, helper, inverse, isZero, modulus, multiply, negateLazily, one, subtract } from "./field";
+import { BATCHED, LANES, add, dot2, dot3, dot5, dot6, helper, inverse, isZero, modulus, multiply, negateLazily, one, subtract } from "./field";
 import { bad, context, nextTerm, scratch, slots, stride, sum, tables, terms } from "../state";
 
+// Globals are read once into `base` and `s` at the beginning of each function: the engine would load them anew in every loop.
+
 @inline
-function slot(code: usize, word: i32): usize {
-  return slots + <usize>load<u32>(code + (<usize>word << 2)) * stride;
+function slot(code: usize, word: i32, base: usize, s: usize): usize {
+  return base + <usize>load<u32>(code + (<usize>word << 2)) * s;
 }
 
 /** Address of the context of the vector at byte j of a slot. */
@@ -17,10 +19,11 @@ function contextOf(j: usize): usize {
 
 function runLine(code: usize, count: i32): usize {
   const s = stride;
+  const base = slots;
   for (let i = 0; i < count; i++) {
-    let out = slot(code, 0);
-    let a = slot(code, 1);
-    let b = slot(code, 2);
+    let out = slot(code, 0, base, s);
+    let a = slot(code, 1, base, s);
+    let b = slot(code, 2, base, s);
     code += 12;
     for (let j: usize = 0; j < s; j += 16) {
       const c = contextOf(j);
@@ -53,10 +56,11 @@ function runLine(code: usize, count: i32): usize {
 
 function runBracket(code: usize, count: i32): usize {
   const s = stride;
+  const base = slots;
   for (let i = 0; i < count; i++) {
-    let out = slot(code, 0);
-    let a = slot(code, 1);
-    let b = slot(code, 2);
+    let out = slot(code, 0, base, s);
+    let a = slot(code, 1, base, s);
+    let b = slot(code, 2, base, s);
     code += 12;
     for (let j: usize = 0; j < s; j += 16) {
       const c = contextOf(j);
@@ -82,10 +86,11 @@ function runBracket(code: usize, count: i32): usize {
 
 function runMinor(code: usize, count: i32): usize {
   const s = stride;
+  const base = slots;
   for (let i = 0; i < count; i++) {
-    let out = slot(code, 0);
-    let a = slot(code, 1);
-    let b = slot(code, 2);
+    let out = slot(code, 0, base, s);
+    let a = slot(code, 1, base, s);
+    let b = slot(code, 2, base, s);
     code += 12;
     for (let j: usize = 0; j < s; j += 16) {
       const c = contextOf(j);
@@ -100,12 +105,14 @@ function runMinor(code: usize, count: i32): usize {
 }
 
 function runAdd(code: usize, count: i32): usize {
+  const s = stride;
+  const base = slots;
   for (let i = 0; i < count; i++) {
-    const out = slot(code, 0);
-    const a = slot(code, 1);
-    const b = slot(code, 2);
+    const out = slot(code, 0, base, s);
+    const a = slot(code, 1, base, s);
+    const b = slot(code, 2, base, s);
     code += 12;
-    for (let j: usize = 0; j < stride; j += 16) {
+    for (let j: usize = 0; j < s; j += 16) {
       const c = contextOf(j);
       v128.store(out + j, add(v128.load(a + j), v128.load(b + j), modulus(c), helper(c)));
     }
@@ -114,12 +121,14 @@ function runAdd(code: usize, count: i32): usize {
 }
 
 function runSubtract(code: usize, count: i32): usize {
+  const s = stride;
+  const base = slots;
   for (let i = 0; i < count; i++) {
-    const out = slot(code, 0);
-    const a = slot(code, 1);
-    const b = slot(code, 2);
+    const out = slot(code, 0, base, s);
+    const a = slot(code, 1, base, s);
+    const b = slot(code, 2, base, s);
     code += 12;
-    for (let j: usize = 0; j < stride; j += 16) {
+    for (let j: usize = 0; j < s; j += 16) {
       const c = contextOf(j);
       v128.store(out + j, subtract(v128.load(a + j), v128.load(b + j), modulus(c), helper(c)));
     }
@@ -128,12 +137,14 @@ function runSubtract(code: usize, count: i32): usize {
 }
 
 function runMultiply(code: usize, count: i32): usize {
+  const s = stride;
+  const base = slots;
   for (let i = 0; i < count; i++) {
-    const out = slot(code, 0);
-    const a = slot(code, 1);
-    const b = slot(code, 2);
+    const out = slot(code, 0, base, s);
+    const a = slot(code, 1, base, s);
+    const b = slot(code, 2, base, s);
     code += 12;
-    for (let j: usize = 0; j < stride; j += 16) {
+    for (let j: usize = 0; j < s; j += 16) {
       const c = contextOf(j);
       v128.store(out + j, multiply(v128.load(a + j), v128.load(b + j), modulus(c), helper(c)));
     }
@@ -157,8 +168,10 @@ function mark(j: usize, zeros: v128, denominator: u32): void {
  * is marked.
  */
 function runInvert(code: usize, count: i32): usize {
+  const s = stride;
+  const base = slots;
   const partial = scratch + 16;
-  for (let j: usize = 0; j < stride; j += 16) {
+  for (let j: usize = 0; j < s; j += 16) {
     const c = contextOf(j);
     const p = modulus(c);
     const q = helper(c);
@@ -166,7 +179,7 @@ function runInvert(code: usize, count: i32): usize {
     let product = unit;
     let entry = code;
     for (let i = 0; i < count; i++) {
-      let x = v128.load(slot(entry, 1) + j);
+      let x = v128.load(slot(entry, 1, base, s) + j);
       const zeros = isZero(x);
       if (v128.any_true(zeros)) {
         mark(j, zeros, load<u32>(entry, 8));
@@ -175,16 +188,16 @@ function runInvert(code: usize, count: i32): usize {
       if (BATCHED) {
         v128.store(partial + (<usize>i << 4), product);
         product = multiply(product, x, p, q);
-      } else v128.store(slot(entry, 0) + j, inverse(x, c));
+      } else v128.store(slot(entry, 0, base, s) + j, inverse(x, c));
       entry += 12;
     }
     if (!BATCHED) continue;
     let rest = inverse(product, c);
     for (let i = count - 1; i >= 0; i--) {
       entry -= 12;
-      let x = v128.load(slot(entry, 1) + j);
+      let x = v128.load(slot(entry, 1, base, s) + j);
       x = v128.bitselect(unit, x, isZero(x));
-      v128.store(slot(entry, 0) + j, multiply(rest, v128.load(partial + (<usize>i << 4)), p, q));
+      v128.store(slot(entry, 0, base, s) + j, multiply(rest, v128.load(partial + (<usize>i << 4)), p, q));
       rest = multiply(rest, x, p, q);
     }
   }
@@ -198,15 +211,17 @@ function signed(x: v128, signs: u32, bit: u32, p: v128): v128 {
 }
 
 function runCombine2(code: usize, count: i32, width: i32): usize {
+  const s = stride;
+  const base = slots;
   for (let i = 0; i < count; i++) {
-    const out = slot(code, 0);
+    const out = slot(code, 0, base, s);
     const signs = load<u32>(code, 4);
-    const s0 = slot(code, 2);
-    const v0 = slot(code, 3);
-    const s1 = slot(code, 4);
-    const v1 = slot(code, 5);
+    const s0 = slot(code, 2, base, s);
+    const v0 = slot(code, 3, base, s);
+    const s1 = slot(code, 4, base, s);
+    const v1 = slot(code, 5, base, s);
     code += 24;
-    for (let j: usize = 0; j < stride; j += 16) {
+    for (let j: usize = 0; j < s; j += 16) {
       const c = contextOf(j);
       const p = modulus(c);
       const q = helper(c);
@@ -215,7 +230,7 @@ function runCombine2(code: usize, count: i32, width: i32): usize {
       let at = j;
       for (let w = 0; w < width; w++) {
         v128.store(out + at, dot2(x0, v128.load(v0 + at), x1, v128.load(v1 + at), p, q));
-        at += stride;
+        at += s;
       }
     }
   }
@@ -223,17 +238,19 @@ function runCombine2(code: usize, count: i32, width: i32): usize {
 }
 
 function runCombine3(code: usize, count: i32, width: i32): usize {
+  const s = stride;
+  const base = slots;
   for (let i = 0; i < count; i++) {
-    const out = slot(code, 0);
+    const out = slot(code, 0, base, s);
     const signs = load<u32>(code, 4);
-    const s0 = slot(code, 2);
-    const v0 = slot(code, 3);
-    const s1 = slot(code, 4);
-    const v1 = slot(code, 5);
-    const s2 = slot(code, 6);
-    const v2 = slot(code, 7);
+    const s0 = slot(code, 2, base, s);
+    const v0 = slot(code, 3, base, s);
+    const s1 = slot(code, 4, base, s);
+    const v1 = slot(code, 5, base, s);
+    const s2 = slot(code, 6, base, s);
+    const v2 = slot(code, 7, base, s);
     code += 32;
-    for (let j: usize = 0; j < stride; j += 16) {
+    for (let j: usize = 0; j < s; j += 16) {
       const c = contextOf(j);
       const p = modulus(c);
       const q = helper(c);
@@ -243,7 +260,7 @@ function runCombine3(code: usize, count: i32, width: i32): usize {
       let at = j;
       for (let w = 0; w < width; w++) {
         v128.store(out + at, dot3(x0, v128.load(v0 + at), x1, v128.load(v1 + at), x2, v128.load(v2 + at), p, q));
-        at += stride;
+        at += s;
       }
     }
   }
@@ -251,21 +268,23 @@ function runCombine3(code: usize, count: i32, width: i32): usize {
 }
 
 function runCombine5(code: usize, count: i32, width: i32): usize {
+  const s = stride;
+  const base = slots;
   for (let i = 0; i < count; i++) {
-    const out = slot(code, 0);
+    const out = slot(code, 0, base, s);
     const signs = load<u32>(code, 4);
-    const s0 = slot(code, 2);
-    const v0 = slot(code, 3);
-    const s1 = slot(code, 4);
-    const v1 = slot(code, 5);
-    const s2 = slot(code, 6);
-    const v2 = slot(code, 7);
-    const s3 = slot(code, 8);
-    const v3 = slot(code, 9);
-    const s4 = slot(code, 10);
-    const v4 = slot(code, 11);
+    const s0 = slot(code, 2, base, s);
+    const v0 = slot(code, 3, base, s);
+    const s1 = slot(code, 4, base, s);
+    const v1 = slot(code, 5, base, s);
+    const s2 = slot(code, 6, base, s);
+    const v2 = slot(code, 7, base, s);
+    const s3 = slot(code, 8, base, s);
+    const v3 = slot(code, 9, base, s);
+    const s4 = slot(code, 10, base, s);
+    const v4 = slot(code, 11, base, s);
     code += 48;
-    for (let j: usize = 0; j < stride; j += 16) {
+    for (let j: usize = 0; j < s; j += 16) {
       const c = contextOf(j);
       const p = modulus(c);
       const q = helper(c);
@@ -274,17 +293,16 @@ function runCombine5(code: usize, count: i32, width: i32): usize {
       const x2 = signed(v128.load(s2 + j), signs, 2, p);
       const x3 = signed(v128.load(s3 + j), signs, 3, p);
       const x4 = signed(v128.load(s4 + j), signs, 4, p);
-      const zero = v128.xor(x0, x0);
       let at = j;
       for (let w = 0; w < width; w++) {
         v128.store(
           out + at,
-          dot6(
+          dot5(
             x0, v128.load(v0 + at), x1, v128.load(v1 + at), x2, v128.load(v2 + at),
-            x3, v128.load(v3 + at), x4, v128.load(v4 + at), zero, zero, p, q,
+            x3, v128.load(v3 + at), x4, v128.load(v4 + at), p, q,
           ),
         );
-        at += stride;
+        at += s;
       }
     }
   }
@@ -321,23 +339,25 @@ function signedEntry(table: usize, right: usize, p: v128): v128 {
 
 /** Tables: [components, slots of one flavour left, right, 0], then the products of each component. */
 function runWedge(code: usize, count: i32, degree: i32): usize {
+  const s = stride;
+  const base = slots;
   const head = load<u32>(tables + (<usize>degree << 2));
   const components = load<i32>(head);
-  const leftWidth = <usize>load<u32>(head, 4) * stride;
-  const rightWidth = <usize>load<u32>(head, 8) * stride;
+  const leftWidth = <usize>load<u32>(head, 4) * s;
+  const rightWidth = <usize>load<u32>(head, 8) * s;
   for (let i = 0; i < count; i++) {
-    let out = slot(code, 0);
-    let w = slot(code, 1);
-    let r = slot(code, 2);
+    let out = slot(code, 0, base, s);
+    let w = slot(code, 1, base, s);
+    let r = slot(code, 2, base, s);
     code += 12;
     for (let flavour = 0; flavour < 4; flavour++) {
       let table: usize = head + 16;
       for (let component = 0; component < components; component++) {
-        for (let j: usize = 0; j < stride; j += 16) {
+        for (let j: usize = 0; j < s; j += 16) {
           const c = contextOf(j);
           v128.store(out + j, tableSum(table, degree + 1, w + j, r + j, modulus(c), helper(c)));
         }
-        out += stride;
+        out += s;
         table += 12 * (degree + 1);
       }
       w += leftWidth;
@@ -348,24 +368,26 @@ function runWedge(code: usize, count: i32, degree: i32): usize {
 }
 
 function runPair(code: usize, count: i32, degree: i32): usize {
+  const s = stride;
+  const base = slots;
   const head = load<u32>(tables + (<usize>(8 + degree) << 2));
   const products = load<i32>(head);
-  const leftWidth = <usize>load<u32>(head, 4) * stride;
-  const rightWidth = <usize>load<u32>(head, 8) * stride;
+  const leftWidth = <usize>load<u32>(head, 4) * s;
+  const rightWidth = <usize>load<u32>(head, 8) * s;
   const table: usize = head + 16;
   for (let i = 0; i < count; i++) {
-    const out = slot(code, 0);
-    const v = slot(code, 1);
-    const w = slot(code, 2);
+    const out = slot(code, 0, base, s);
+    const v = slot(code, 1, base, s);
+    const w = slot(code, 2, base, s);
     code += 12;
-    for (let j: usize = 0; j < stride; j += 16) {
+    for (let j: usize = 0; j < s; j += 16) {
       const c = contextOf(j);
       const p = modulus(c);
       const q = helper(c);
       let product: v128;
       if (degree == 0) {
-        const x = multiply(v128.load(v + j), v128.load(v + j + stride), p, q);
-        const y = multiply(v128.load(v + j + 2 * stride), v128.load(v + j + 3 * stride), p, q);
+        const x = multiply(v128.load(v + j), v128.load(v + j + s), p, q);
+        const y = multiply(v128.load(v + j + 2 * s), v128.load(v + j + 3 * s), p, q);
         product = multiply(x, y, p, q);
       } else {
         product = tableSum(table, products, v + j, w + j, p, q);
@@ -384,11 +406,13 @@ function runPair(code: usize, count: i32, degree: i32): usize {
 }
 
 function runTerm(code: usize, count: i32): usize {
+  const s = stride;
+  const base = slots;
   for (let i = 0; i < count; i++) {
-    const a = slot(code, 0);
+    const a = slot(code, 0, base, s);
     const negative = load<i32>(code, 4) != 0;
     code += 12;
-    for (let j: usize = 0; j < stride; j += 16) {
+    for (let j: usize = 0; j < s; j += 16) {
       const c = contextOf(j);
       const p = modulus(c);
       const q = helper(c);

@@ -3,19 +3,22 @@
 export const LANES: i32 = 4;
 export const BATCHED: bool = true;
 
-@inline
-export function modulus(context: usize): v128 {
-  return i32x4.splat(0x7fffffff);
-}
+// The constants are read from memory: engines build a vector constant anew wherever it is used.
 
 @inline
+export function modulus(context: usize): v128 {
+  return v128.load(context);
+}
+
+/** 2^31-1 in 64 bits. */
+@inline
 export function helper(context: usize): v128 {
-  return i64x2.splat(0x7fffffff);
+  return v128.load(context, 16);
 }
 
 @inline
 export function one(context: usize): v128 {
-  return i32x4.splat(1);
+  return v128.load(context, 32);
 }
 
 @inline
@@ -83,6 +86,32 @@ export function dot3(a: v128, b: v128, c: v128, d: v128, e: v128, f: v128, p: v1
   return reduce(low, high, p, q);
 }
 
+/** Five products: the first three are folded before the others come, so that 64 bits hold them. */
+@inline
+export function dot5(
+  a0: v128, b0: v128, a1: v128, b1: v128, a2: v128, b2: v128,
+  a3: v128, b3: v128, a4: v128, b4: v128,
+  p: v128, q: v128,
+): v128 {
+  let low = i64x2.add(
+    i64x2.add(i64x2.extmul_low_i32x4_u(a0, b0), i64x2.extmul_low_i32x4_u(a1, b1)),
+    i64x2.extmul_low_i32x4_u(a2, b2),
+  );
+  let high = i64x2.add(
+    i64x2.add(i64x2.extmul_high_i32x4_u(a0, b0), i64x2.extmul_high_i32x4_u(a1, b1)),
+    i64x2.extmul_high_i32x4_u(a2, b2),
+  );
+  low = i64x2.add(
+    fold(low, q),
+    i64x2.add(i64x2.extmul_low_i32x4_u(a3, b3), i64x2.extmul_low_i32x4_u(a4, b4)),
+  );
+  high = i64x2.add(
+    fold(high, q),
+    i64x2.add(i64x2.extmul_high_i32x4_u(a3, b3), i64x2.extmul_high_i32x4_u(a4, b4)),
+  );
+  return reduce(low, high, p, q);
+}
+
 /** Six products: the first three are folded before the others come, so that 64 bits hold them. */
 @inline
 export function dot6(
@@ -109,23 +138,21 @@ export function dot6(
   return reduce(low, high, p, q);
 }
 
-function squares(a: v128, times: i32): v128 {
-  const p = modulus(0);
-  const q = helper(0);
+function squares(a: v128, times: i32, p: v128, q: v128): v128 {
   for (let i = 0; i < times; i++) a = multiply(a, a, p, q);
   return a;
 }
 
 /** a to the power p-2 = 4 (2^29-1) + 1; xn is a to the power 2^n-1. */
 export function inverse(a: v128, context: usize): v128 {
-  const p = modulus(0);
-  const q = helper(0);
-  const x2 = multiply(squares(a, 1), a, p, q);
-  const x4 = multiply(squares(x2, 2), x2, p, q);
-  const x8 = multiply(squares(x4, 4), x4, p, q);
-  const x16 = multiply(squares(x8, 8), x8, p, q);
-  const x24 = multiply(squares(x16, 8), x8, p, q);
-  const x28 = multiply(squares(x24, 4), x4, p, q);
-  const x29 = multiply(squares(x28, 1), a, p, q);
-  return multiply(squares(x29, 2), a, p, q);
+  const p = modulus(context);
+  const q = helper(context);
+  const x2 = multiply(squares(a, 1, p, q), a, p, q);
+  const x4 = multiply(squares(x2, 2, p, q), x2, p, q);
+  const x8 = multiply(squares(x4, 4, p, q), x4, p, q);
+  const x16 = multiply(squares(x8, 8, p, q), x8, p, q);
+  const x24 = multiply(squares(x16, 8, p, q), x8, p, q);
+  const x28 = multiply(squares(x24, 4, p, q), x4, p, q);
+  const x29 = multiply(squares(x28, 1, p, q), a, p, q);
+  return multiply(squares(x29, 2, p, q), a, p, q);
 }

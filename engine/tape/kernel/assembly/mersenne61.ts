@@ -3,19 +3,22 @@
 export const LANES: i32 = 2;
 export const BATCHED: bool = true;
 
-@inline
-export function modulus(context: usize): v128 {
-  return i64x2.splat(0x1fffffffffffffff);
-}
+// The constants are read from memory: engines build a vector constant anew wherever it is used.
 
 @inline
+export function modulus(context: usize): v128 {
+  return v128.load(context);
+}
+
+/** 2^31-1. */
+@inline
 export function helper(context: usize): v128 {
-  return i64x2.splat(0x7fffffff);
+  return v128.load(context, 16);
 }
 
 @inline
 export function one(context: usize): v128 {
-  return i64x2.splat(1);
+  return v128.load(context, 32);
 }
 
 @inline
@@ -60,7 +63,7 @@ export function multiply(a: v128, b: v128, p: v128, q: v128): v128 {
   const middle = i64x2.add(i64x2.extmul_low_i32x4_u(x, z), i64x2.extmul_high_i32x4_u(x, z));
   const t = i64x2.add(
     i64x2.add(low, i64x2.shl(high, 1)),
-    i64x2.add(i64x2.shr_u(middle, 30), i64x2.shl(v128.and(middle, i64x2.splat(0x3fffffff)), 31)),
+    i64x2.add(i64x2.shr_u(middle, 30), i64x2.shl(v128.and(middle, i64x2.shr_u(q, 1)), 31)),
   );
   return settle(i64x2.add(v128.and(t, p), i64x2.shr_u(t, 61)), p);
 }
@@ -76,6 +79,15 @@ export function dot3(a: v128, b: v128, c: v128, d: v128, e: v128, f: v128, p: v1
 }
 
 @inline
+export function dot5(
+  a0: v128, b0: v128, a1: v128, b1: v128, a2: v128, b2: v128,
+  a3: v128, b3: v128, a4: v128, b4: v128,
+  p: v128, q: v128,
+): v128 {
+  return add(dot3(a0, b0, a1, b1, a2, b2, p, q), dot2(a3, b3, a4, b4, p, q), p, q);
+}
+
+@inline
 export function dot6(
   a0: v128, b0: v128, a1: v128, b1: v128, a2: v128, b2: v128,
   a3: v128, b3: v128, a4: v128, b4: v128, a5: v128, b5: v128,
@@ -86,8 +98,8 @@ export function dot6(
 
 /** a to the power p-2 = 4 (2^59-1) + 1. */
 export function inverse(a: v128, context: usize): v128 {
-  const p = modulus(0);
-  const q = helper(0);
+  const p = modulus(context);
+  const q = helper(context);
   let power = a;
   for (let i = 0; i < 58; i++) power = multiply(multiply(power, power, p, q), a, p, q);
   power = multiply(power, power, p, q);
