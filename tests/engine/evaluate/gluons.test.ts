@@ -168,14 +168,14 @@ describe("exact points", () => {
       referenceChi: [],
       referenceLine: [zeros, zeros] as const,
     };
-    const valueOf = (text: string) => {
+    const exactValue = (text: string) => {
       const evaluation = evaluateForm(gaussianRationals, formOf(text, 5, 0, [1, 2]), point);
       if (evaluation.kind !== "value") throw new Error("a denominator vanishes");
       return evaluation.sum;
     };
     const product = gaussianRationals.multiply(
-      valueOf("<1 2>^4 / (<1 2><2 3><3 4><4 5><5 1>)"),
-      valueOf("[1 2]^4 / ([1 2][2 3][3 4][4 5][5 1])"),
+      exactValue("<1 2>^4 / (<1 2><2 3><3 4><4 5><5 1>)"),
+      exactValue("[1 2]^4 / ([1 2][2 3][3 4][4 5][5 1])"),
     );
     // s_ab = 2 p_a.p_b = 2 (E E - x x + y y - z z), from the momenta themselves.
     const s = (a: number, b: number) => {
