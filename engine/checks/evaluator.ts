@@ -18,6 +18,7 @@ export type Outcome =
 
 export interface PreparedForm {
   readonly form: FormAtN;
+  readonly tape: Tape;
   /** Field multiplications for one sample. */
   readonly operations: number;
   evaluate(samples: readonly Sample[]): readonly Outcome[];
@@ -39,6 +40,7 @@ export function prepare(form: FormAtN): PreparedForm {
   const tape: Tape = compiled.value;
   return {
     form,
+    tape,
     operations: tape.counts.multiplications,
     evaluate: (samples) => (samples.length === 0 ? [] : evaluated(tape, samples)),
   };

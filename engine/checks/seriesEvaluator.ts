@@ -6,7 +6,8 @@ import type { FormAtN } from "../evaluate/form";
 import type { Field } from "../fields";
 import { type PrimeSeries, type PrimeSeriesField, primeSeries } from "../fields/primeSeries";
 import type { Point } from "../kinematics";
-import { compile, interpretTape, type Tape } from "../tape";
+import { interpretTape } from "../tape";
+import type { PreparedForm } from "./evaluator";
 
 export interface SeriesValue {
   readonly field: PrimeSeriesField;
@@ -16,8 +17,8 @@ export interface SeriesValue {
 
 export interface SeriesForm {
   readonly form: FormAtN;
-  /** Field multiplications of one evaluation at a point that does not move; null where the form is too large for a tape. */
-  readonly operations: number | null;
+  /** Field multiplications of one evaluation at a point that does not move. */
+  readonly operations: number;
   /**
    * The value along a path, computed again with twice the number of series terms until `enough` says that what is known
    * suffices, or the number is at its limit; null where a denominator vanishes all along the path, as far as that can be seen.
@@ -33,28 +34,16 @@ export interface SeriesForm {
 const fewestTerms = 4;
 const mostTerms = 32;
 
-/** The form compiled at its first use; every mark shares the tape. */
-export function prepareSeries(form: FormAtN): SeriesForm {
-  let compiled: Tape | null | undefined;
-  const tape = (): Tape | null => {
-    if (compiled === undefined) {
-      const result = compile(form);
-      compiled = result.ok ? result.value : null;
-    }
-    return compiled;
-  };
+/** The series of a form, on the tape that its other values are computed with. */
+export function prepareSeries({ form, tape, operations }: PreparedForm): SeriesForm {
   return {
     form,
-    get operations() {
-      return tape()?.counts.multiplications ?? null;
-    },
+    operations,
     evaluate(base, path, enough) {
-      const code = tape();
-      if (code === null) throw new Error("prepareSeries: evaluate was called for a form that is too large");
       let best: SeriesValue | null = null;
       for (let terms = fewestTerms; terms <= mostTerms; terms *= 2) {
         const field = primeSeries(base, terms);
-        const found = interpretTape<PrimeSeries>(code, field, path(field));
+        const found = interpretTape<PrimeSeries>(tape, field, path(field));
         if (found.kind !== "value") continue;
         best = { field, sum: found.sum, terms: found.terms };
         if (enough(best)) return best;

@@ -88,7 +88,7 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
     return withoutValue(form, diagnosing(null, []));
 
   const prepared = prepare(form);
-  const series = prepareSeries(form);
+  const series = prepareSeries(prepared);
   const ground = groundsOf(seed, form);
   const size = sizeBound(form);
   const own = missProbability(size, size);

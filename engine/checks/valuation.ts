@@ -29,7 +29,7 @@ export function measurePoles(
   ground: (attempt: number) => Ground,
 ): readonly Pole[] {
   const { operations } = series;
-  const affordable = operations !== null && operations * poles.length <= poleBudget;
+  const affordable = operations * poles.length <= poleBudget;
   return poles.map((pole) => (affordable ? measure(form, pole, series, ground) : reported(pole)));
 }
 

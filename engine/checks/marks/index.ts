@@ -1,6 +1,7 @@
 /** The marks that a check sets, one file each. `constraint` marks are those every amplitude has: a failure refuses the form. */
 import type { Bench } from "../bench";
 import type { Mark, MarkCode } from "../report";
+import { collinear } from "./collinear";
 import { cyclic } from "./cyclic";
 import { dualConformal } from "./dualConformal";
 import { lineIndependent } from "./lineIndependent";
@@ -8,6 +9,7 @@ import { localPoles } from "./localPoles";
 import { loopExchange } from "./loopExchange";
 import { referenceIndependent } from "./referenceIndependent";
 import { reflection } from "./reflection";
+import { soft } from "./soft";
 import { spuriousCancel } from "./spuriousCancel";
 
 export interface MarkCheck {
@@ -47,4 +49,6 @@ export const markChecks: readonly MarkCheck[] = [
     constraint: true,
     run: spuriousCancel,
   },
+  { code: "soft", says: "has the soft limit of an amplitude", constraint: true, run: soft },
+  { code: "collinear", says: "has the collinear limits of an amplitude", constraint: true, run: collinear },
 ];
