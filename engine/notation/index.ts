@@ -18,6 +18,7 @@ export {
 } from "./entry";
 export { expandTerms } from "./expand";
 export { latexExpression, latexLines } from "./latex";
+export { fromLatex } from "./latexReader";
 export { type ParseOptions, parse, type Reading, read } from "./parse";
 export { printExpression, printFormula, printItem } from "./print";
 export { formulaSchema, treeSchema } from "./schema";
