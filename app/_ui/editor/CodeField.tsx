@@ -25,6 +25,8 @@ export function CodeField(props: {
   const { changed, nonce, describedBy, faults } = props;
   const [text, setText] = useState(props.initial);
   const [ready, setReady] = useState(false);
+  // What the editor holds; the text area behind it is not kept up to date, because writing a long text into it takes time.
+  const latest = useRef(props.initial);
   const place = useRef<HTMLDivElement>(null);
   const area = useRef<HTMLTextAreaElement>(null);
   const editor = useRef<CodeEditor | null>(null);
@@ -34,14 +36,20 @@ export function CodeField(props: {
     import("./codeEditor").then(({ createCodeEditor }) => {
       if (gone || place.current === null) return;
       const focused = document.activeElement === area.current;
+      // What was typed into the text area before any script ran is not lost.
+      const typed = area.current !== null && !area.current.hidden ? area.current.value : latest.current;
+      if (typed !== latest.current) {
+        latest.current = typed;
+        changed(typed);
+      }
       editor.current = createCodeEditor({
         parent: place.current,
-        text: area.current?.value ?? "",
+        text: latest.current,
         labelledBy: "notation-label",
         describedBy,
         nonce,
         changed: (next) => {
-          setText(next);
+          latest.current = next;
           changed(next);
         },
       });
@@ -62,7 +70,11 @@ export function CodeField(props: {
   useImperativeHandle(
     props.ref,
     () => ({
-      setText: (next) => (editor.current === null ? setText(next) : editor.current.setText(next)),
+      setText: (next) => {
+        latest.current = next;
+        if (editor.current === null) setText(next);
+        else editor.current.setText(next);
+      },
       replace: (from, to, next) => editor.current?.replace(from, to, next),
     }),
     [],
@@ -85,6 +97,7 @@ export function CodeField(props: {
           autoCapitalize="off"
           autoComplete="off"
           onChange={(event) => {
+            latest.current = event.target.value;
             setText(event.target.value);
             changed(event.target.value);
           }}

@@ -1,12 +1,13 @@
 "use client";
 
+import { memo } from "react";
 import formula from "../Formula.module.css";
 import { numbered } from "../words";
 import styles from "./SubmitForm.module.css";
 import type { PreviewState } from "./usePreview";
 
 /** The formula as a paper prints it, while it is typed. */
-export function PreviewPane({ state }: { state: PreviewState }) {
+export const PreviewPane = memo(function PreviewPane({ state }: { state: PreviewState }) {
   const { preview, tooSlow } = state;
   return (
     <section className={styles.preview} aria-labelledby="preview-head">
@@ -52,4 +53,4 @@ export function PreviewPane({ state }: { state: PreviewState }) {
       )}
     </section>
   );
-}
+});

@@ -1,6 +1,7 @@
 "use client";
 
 import { useActionState, useCallback, useEffect, useId, useMemo, useRef, useState } from "react";
+import type { Diagnostic } from "../../../engine/result";
 import type { Problem, SubmitReply } from "../../_contract";
 import { Diagnostics } from "../Diagnostics";
 import { CodeField, type CodeFieldHandle } from "./CodeField";
@@ -16,6 +17,8 @@ export interface Refusal {
   readonly fields: Fields;
   readonly problem: Pick<Problem, "detail" | "diagnostics">;
 }
+
+const none: readonly Diagnostic[] = [];
 
 /** Sends the fields without script; redirects to the check, or gives back what is wrong. */
 export type SubmitAction = (before: Refusal | null, data: FormData) => Promise<Refusal | null>;
@@ -151,7 +154,7 @@ export function SubmitForm(props: {
         initial={fields.notation}
         nonce={props.nonce}
         describedBy={faultsId}
-        faults={shown?.source === fields.notation ? shown.diagnostics : []}
+        faults={shown !== null && shown.source === fields.notation ? shown.diagnostics : none}
         changed={changeNotation}
       />
       <div id={faultsId} aria-live="polite" className={styles.faults}>

@@ -5,7 +5,7 @@ import { renderLatex } from "../latex";
 import { entryOf, type Fields } from "./entryFields";
 
 /** Lines that the preview renders; the form's own page shows them all. */
-export const PREVIEW_LINES = 40;
+export const PREVIEW_LINES = 24;
 
 export type Preview =
   | { readonly kind: "empty" }
