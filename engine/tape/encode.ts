@@ -2,8 +2,8 @@
 import { CONSTANT, type Graph, INPUT, PART } from "./graph";
 import type { TapeInput } from "./inputs";
 import { BRACKET, INVERT, LINE, MINOR, TERM } from "./opcodes";
-import { type Order, operandRange } from "./order";
-import { HEAD, type Tape } from "./tape";
+import { type Order, operandsFrom, operandsTo } from "./order";
+import type { Tape } from "./tape";
 
 /** Denominators of one batch at most. */
 export const BATCH = 64;
@@ -57,6 +57,8 @@ class Encoder {
   private readonly slotOf: Int32Array;
   /** Position in the order of the last use of each node; terms are used at the end of their slice. */
   private readonly lastUse: Int32Array;
+  private readonly base: Int32Array;
+  private readonly offset: Int32Array;
   private readonly denominators = new Map<number, number>();
   private readonly slices: number[] = [0];
   /** Of the run at hand: where its head is, and what it is a run of. */
@@ -73,6 +75,8 @@ class Encoder {
     private readonly needed: Uint8Array,
     private readonly terms: ArrayLike<number>,
   ) {
+    this.base = new Int32Array(graph.size);
+    this.offset = new Int32Array(graph.size);
     this.slotOf = new Int32Array(graph.size).fill(-1);
     this.lastUse = new Int32Array(graph.size).fill(-1);
     graph.denominatorNodes.forEach((node, i) => {
@@ -81,6 +85,7 @@ class Encoder {
   }
 
   encode(): Encoded {
+    this.placeParts();
     const { inputs, constants } = this.placeGiven();
     this.findLastUses();
     let position = 0;
@@ -122,15 +127,17 @@ class Encoder {
     return { inputs, constants };
   }
 
-  /** The node whose slots a node stands in, for a part of a vector, and where in it. */
-  private resolve(node: number): readonly [base: number, offset: number] {
-    const { words, starts } = this.graph.nodes;
-    let [base, offset] = [node, 0];
-    while (this.graph.operation(base) === PART) {
-      offset += words[starts[base]! + 2]!;
-      base = words[starts[base]! + 1]! >> 1;
+  /** For each node the one whose slots it stands in, itself unless it is a part of a vector, and where in them. */
+  private placeParts(): void {
+    const { graph, base, offset } = this;
+    const { words, starts } = graph.nodes;
+    for (let node = 0; node < graph.size; node++) {
+      base[node] = node;
+      if (graph.operation(node) !== PART) continue;
+      const vector = words[starts[node]! + 1]! >> 1;
+      base[node] = base[vector]!;
+      offset[node] = offset[vector]! + words[starts[node]! + 2]!;
     }
-    return [base, offset];
   }
 
   private findLastUses(): void {
@@ -139,21 +146,23 @@ class Encoder {
     for (let position = 0; position < nodes.length; position++) {
       const node = nodes[position]!;
       this.lastUse[node] = Math.max(this.lastUse[node]!, position);
-      const [from, to] = operandRange(this.graph.operation(node), starts[node]!, starts[node + 1]!);
-      for (let at = from; at < to; at++) this.lastUse[this.resolve(words[at]! >> 1)[0]] = position;
+      const operation = this.graph.operation(node);
+      const to = operandsTo(operation, starts[node]!, starts[node + 1]!);
+      for (let at = operandsFrom(operation, starts[node]!, starts[node + 1]!); at < to; at++) {
+        this.lastUse[this.base[words[at]! >> 1]!] = position;
+      }
     }
     let term = 0;
     for (const end of ends) {
       for (; term < end.terms; term++) {
-        const [base] = this.resolve(this.terms[term]! >> 1);
+        const base = this.base[this.terms[term]! >> 1]!;
         this.lastUse[base] = Math.max(this.lastUse[base]!, end.nodes);
       }
     }
   }
 
   private slot(ref: number): number {
-    const [base, offset] = this.resolve(ref >> 1);
-    return this.slotOf[base]! + offset;
+    return this.slotOf[this.base[ref >> 1]!]! + this.offset[ref >> 1]!;
   }
 
   private operation(node: number, position: number): void {
@@ -169,12 +178,13 @@ class Encoder {
     const out = this.slots.take(width);
     this.slotOf[node] = out;
     code.push(out);
-    const [from, to] = operandRange(operation, start, end);
+    const from = operandsFrom(operation, start, end);
+    const to = operandsTo(operation, start, end);
     // Signs of a combination.
     if (from === start + 2) code.push(words[start + 1]!);
     for (let at = from; at < to; at++) code.push(this.slot(words[at]!));
     if (operation === INVERT) code.push(this.denominators.get(node)!);
-    for (let at = from; at < to; at++) this.release(this.resolve(words[at]! >> 1)[0], position);
+    for (let at = from; at < to; at++) this.release(this.base[words[at]! >> 1]!, position);
     this.release(node, position);
   }
 
@@ -183,7 +193,7 @@ class Encoder {
     this.code.push(this.slot(ref));
     this.code.push(ref & 1);
     this.code.push(0);
-    this.release(this.resolve(ref >> 1)[0], position);
+    this.release(this.base[ref >> 1]!, position);
   }
 
   /** Gives the slots of a node back after its last use; a batch of inversions reads its operands until its end. */
@@ -210,7 +220,10 @@ class Encoder {
       if (this.head >= 0) this.closeRun();
       this.head = this.code.length;
       this.runKind = kind;
-      for (const word of [operation, 0, plain ? 0 : parameter, 0]) this.code.push(word);
+      this.code.push(operation);
+      this.code.push(0);
+      this.code.push(plain ? 0 : parameter);
+      this.code.push(0);
     }
     this.code.words[this.head + 1]! += 1;
     this.entries += 1;
@@ -228,6 +241,3 @@ class Encoder {
     this.entries = 0;
   }
 }
-
-/** Words of the longest head and entry, what a reader has to have room for. */
-export const LONGEST_ENTRY = HEAD + 12;

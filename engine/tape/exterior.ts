@@ -36,7 +36,7 @@ export class Exterior {
   private readonly products = new TupleTable();
   private readonly buffer = new Int32Array(16);
   private readonly wedges = new Map<number, Ref>();
-  private readonly tops = new Map<number, Ref>();
+  private readonly tops: (Ref | undefined)[] = [];
 
   constructor(
     private readonly graph: Graph,
@@ -224,7 +224,7 @@ export class Exterior {
 
   /** The product of k deltas as a number: four determinants, each from the minors of the first and the last half of the rows. */
   private top(product: number): Ref {
-    let top = this.tops.get(product);
+    let top = this.tops[product];
     if (top === undefined) {
       const rows = this.rows(product);
       const half = Math.ceil(this.k / 2);
@@ -232,7 +232,7 @@ export class Exterior {
         this.k === 1
           ? this.graph.pair(rows[0]!, rows[0]!, 0)
           : this.graph.pair(this.wedge(rows.slice(0, half)), this.wedge(rows.slice(half)), half);
-      this.tops.set(product, top);
+      this.tops[product] = top;
     }
     return top;
   }

@@ -32,23 +32,30 @@ export function neededNodes(graph: Graph, terms: ArrayLike<number>): Uint8Array 
   for (let node = graph.size - 1; node >= 0; node--) {
     if (needed[node] === 0) continue;
     const operation = graph.operation(node);
-    const [from, to] = operandRange(operation, starts[node]!, starts[node + 1]!);
-    for (let at = from; at < to; at++) needed[words[at]! >> 1] = 1;
+    const to = operandsTo(operation, starts[node]!, starts[node + 1]!);
+    for (let at = operandsFrom(operation, starts[node]!, starts[node + 1]!); at < to; at++) needed[words[at]! >> 1] = 1;
   }
   return needed;
 }
 
-/** Where among the words of a node its operands are. Combinations have signs and scalars and vectors in turn: all are operands. */
-export function operandRange(operation: number, start: number, end: number): readonly [from: number, to: number] {
-  if (operation === INPUT || operation === CONSTANT) return [end, end];
-  if (operation === PART) return [start + 1, start + 2];
-  // A combination is the only operation of more than two operands; its first word holds signs.
-  return end - start > 3 ? [start + 2, end] : [start + 1, end];
+/**
+ * Where among the words start .. end-1 of a node its operands begin: behind the operation, and the signs of a combination, which
+ * is the only operation of more than two operands. Scalars and vectors of a combination are operands alike.
+ */
+export function operandsFrom(operation: number, start: number, end: number): number {
+  if (operation === INPUT || operation === CONSTANT) return end;
+  return end - start > 3 ? start + 2 : start + 1;
 }
+
+/** Where they end: a part has one operand, and then an offset. */
+export const operandsTo = (operation: number, start: number, end: number): number =>
+  operation === PART ? start + 2 : end;
 
 export function orderNodes(graph: Graph, needed: Uint8Array, boundaries: readonly Boundary[]): Order {
   const { words, starts } = graph.nodes;
-  const nodes = new Int32Array(needed.reduce((sum, x) => sum + x, 0));
+  let total = 0;
+  for (let node = 0; node < needed.length; node++) total += needed[node]!;
+  const nodes = new Int32Array(total);
   const ends: Boundary[] = [];
   const level = new Uint16Array(SLICE_NODES);
   const depth = new Uint16Array(SLICE_NODES);
@@ -64,16 +71,19 @@ export function orderNodes(graph: Graph, needed: Uint8Array, boundaries: readonl
       depth[place] = 0;
       const given = operation === INPUT || operation === CONSTANT;
       if (needed[node] === 0 || given) continue;
-      let [l, d] = [0, 0];
-      const [from, to] = operandRange(operation, starts[node]!, starts[node + 1]!);
-      for (let at = from; at < to; at++) {
+      let l = 0;
+      let d = 0;
+      const to = operandsTo(operation, starts[node]!, starts[node + 1]!);
+      for (let at = operandsFrom(operation, starts[node]!, starts[node + 1]!); at < to; at++) {
         const operand = (words[at]! >> 1) - first;
         if (operand < 0) continue;
         const inverted = graph.operation(operand + first) === INVERT;
         const reached = level[operand]! + (inverted ? 1 : 0);
         const behind = inverted ? 0 : depth[operand]! + 1;
-        if (reached > l) [l, d] = [reached, behind];
-        else if (reached === l && behind > d) d = behind;
+        if (reached > l) {
+          l = reached;
+          d = behind;
+        } else if (reached === l && behind > d) d = behind;
       }
       level[place] = l;
       if (operation === PART) {
