@@ -15,4 +15,6 @@ export interface Exporter {
 export interface ExportOptions {
   /** The form's identifier in a library, where it has one: "n6k1L0-3v1". */
   readonly identifier?: string;
+  /** LaTeX: only the comments and displays, to be put into a document of one's own. */
+  readonly snippet?: boolean;
 }

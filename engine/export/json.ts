@@ -1,5 +1,5 @@
-/** The syntax tree as JSON, with everything that belongs to the form's identity. */
-import { amplitudeKey, digestOf, type Form } from "../notation";
+/** The syntax tree as JSON, without places in the source, with everything that belongs to the form's identity. */
+import { amplitudeKey, digestOf, type Form, withoutSpans } from "../notation";
 import type { Exporter, ExportOptions } from "./exporter";
 
 export const json: Exporter = {
@@ -18,7 +18,7 @@ export const json: Exporter = {
         s: form.squareSign === 1 ? "<ab>[ab]" : "<ab>[ba]",
         digest: digestOf(form),
         ...(form.title === null ? {} : { title: form.title }),
-        tree: form.formula,
+        tree: withoutSpans(form.formula),
       },
       null,
       1,

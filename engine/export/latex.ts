@@ -13,19 +13,26 @@ export const latex: Exporter = {
 /** Summands in one `align*`: longer formulas are cut, since TeX sets a display as one box. */
 const linesPerDisplay = 30;
 
-function latexDocument(form: Form, { identifier }: ExportOptions = {}): string {
-  const lines = latexLines(form.formula);
+function latexDocument(form: Form, { identifier, snippet = false }: ExportOptions = {}): string {
+  const definitions = form.formula.definitions.length;
+  const lines = latexLines(form.formula).map((line, at) =>
+    at < definitions ? line.replace(" = ", " &= ") : `&${line}`,
+  );
   const displays: string[] = [];
   for (let start = 0; start < lines.length; start += linesPerDisplay)
     displays.push(display(lines.slice(start, start + linesPerDisplay)));
   const references = form.references.map((r) =>
     [r.title, r.arxiv && `arXiv:${r.arxiv}`, r.journal, r.doi && `doi:${r.doi}`, r.where].filter(Boolean).join(", "),
   );
-  return [
+  const comments = [
     `% ${commentText(form.title ?? "A form of a scattering amplitude")}`,
     `% amplitude ${amplitudeKey(form)}, target ${form.target}${identifier === undefined ? "" : `, form ${identifier}`}`,
     `% ${digestOf(form)}`,
     ...references.map((r) => `% reference: ${commentText(r)}`),
+  ];
+  if (snippet) return [...comments, ...displays, ""].join("\n");
+  return [
+    ...comments,
     "\\documentclass{article}",
     "\\usepackage{amsmath}",
     "\\allowdisplaybreaks",
@@ -38,7 +45,7 @@ function latexDocument(form: Form, { identifier }: ExportOptions = {}): string {
 }
 
 const display = (lines: readonly string[]): string =>
-  `\\begin{align*}\n${lines.map((line) => `  & ${line}`).join(" \\\\\n")}\n\\end{align*}`;
+  `\\begin{align*}\n${lines.map((line) => `  ${line}`).join(" \\\\\n")}\n\\end{align*}`;
 
 /** Text that cannot leave a comment line. */
 const commentText = (text: string): string => text.replace(/[\p{Cc}\u2028\u2029]+/gu, " ");
@@ -56,8 +63,9 @@ const special: Readonly<Record<string, string>> = {
   "~": "\\textasciitilde{}",
   "<": "\\textless{}",
   ">": "\\textgreater{}",
+  "|": "\\textbar{}",
 };
 
 /** Text as text: every character with a meaning in TeX is spelled out. */
 export const escapedText = (text: string): string =>
-  commentText(text).replace(/[\\{}$&#%_^~<>]/g, (character) => special[character] ?? character);
+  commentText(text).replace(/[\\{}$&#%_^~<>|]/g, (character) => special[character] ?? character);

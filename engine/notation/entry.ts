@@ -270,12 +270,26 @@ function fieldFault(issue: z.core.$ZodIssue): Diagnostic {
     "The fields of an entry document are amplitude, notation, component, target, s, title, method, references, note.";
   if (issue.code === "unrecognized_keys")
     return fault("entry-unknown-field", `${place}: there is no field ${issue.keys.join(", ")}.`, help);
+  if (issue.code === "too_big") {
+    const limit = limitCodes[issue.path.join(".")];
+    if (limit !== undefined)
+      return fault(limit, `${place}: ${issue.message}.`, "This is the largest that can be checked.");
+  }
   const missing = issue.code === "invalid_type" && issue.message.endsWith("received undefined");
   const code = missing
     ? "entry-missing"
     : (fieldCodes[issue.path.join(".")] ?? (issue.code === "invalid_type" ? "entry-type" : "entry-value"));
   return fault(code, missing ? `${place} is missing.` : `${place}: ${issue.message}.`, help);
 }
+
+/** Fields whose upper bound is a limit of the program. */
+const limitCodes: Readonly<Record<string, Code>> = {
+  "amplitude.n": "limit-legs",
+  "amplitude.n.from": "limit-legs",
+  "amplitude.n.to": "limit-legs",
+  "amplitude.loops": "limit-loops",
+  notation: "limit-source",
+};
 
 const fieldCodes: Readonly<Record<string, Code>> = {
   "amplitude.n": "amplitude-legs",

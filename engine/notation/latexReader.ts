@@ -5,53 +5,12 @@
 import { failure, type Result, type Span, success } from "../result";
 import { Faults, stop } from "./faults";
 import { type LatexToken, latexTokens, naming } from "./latexTokens";
+import { Writer } from "./latexWriter";
 import { deepestNesting, mostSourceUnits } from "./limits";
 import { loopWords } from "./reader";
 
 /** Inside a bracket items are separated by spaces and label arithmetic is not; in conditions `<` is a relation. */
 type Mode = "plain" | "bracket" | "conditions";
-
-/** Collects the text of the notation with its spaces: no piece but an atom begins with one, and none ends with one. */
-class Writer {
-  private readonly pieces: string[] = [];
-  private glued = true;
-
-  get text(): string {
-    return this.pieces.join("");
-  }
-
-  get last(): string {
-    return this.pieces.at(-1) ?? "";
-  }
-
-  /** A name, number or bracket. */
-  atom(text: string): void {
-    this.pieces.push(this.glued ? text : ` ${text}`);
-    this.glued = false;
-  }
-
-  /** Something that takes no space on either side. */
-  tight(text: string): void {
-    this.pieces.push(text);
-    this.glued = true;
-  }
-
-  /** Something that takes no space before it, but one after it. */
-  suffix(text: string): void {
-    this.pieces.push(text);
-    this.glued = false;
-  }
-
-  /** Ends an item: what follows is another one. */
-  separate(): void {
-    this.glued &&= this.pieces.length === 0;
-  }
-
-  /** Takes back plus signs and commas that were written last. */
-  dropSigns(): void {
-    while (/^ ?[+,]$/.test(this.last)) this.pieces.pop();
-  }
-}
 
 const words: Readonly<Record<string, string>> = {
   "\\cap": "cap",

@@ -1,5 +1,6 @@
 /** Reads expressions: sums, products, quotients, powers, and everything that stands for a number. */
 import type { Span } from "../result";
+import { constantValue } from "./constants";
 import { deepestNesting, largestExponent, mostTerms } from "./limits";
 import { readBracket, readDelta } from "./parseBracket";
 import { readArguments } from "./parseIndex";
@@ -256,30 +257,6 @@ function checkExponent(reader: Reader, exponent: Expression, span: Span): Expres
     return placeholder(span);
   }
   return exponent;
-}
-
-/** The value of an index expression without indices; "open" with indices; "other" for anything else. */
-function constantValue(expression: Expression): bigint | "open" | "other" {
-  switch (expression.kind) {
-    case "integer":
-      return BigInt(expression.value);
-    case "index":
-      return "open";
-    case "negate": {
-      const value = constantValue(expression.operand);
-      return typeof value === "bigint" ? -value : value;
-    }
-    case "add":
-    case "multiply": {
-      const isSum = expression.kind === "add";
-      const values = (isSum ? expression.summands : expression.factors).map(constantValue);
-      if (values.includes("other")) return "other";
-      if (values.includes("open")) return "open";
-      return (values as bigint[]).reduce((total, value) => (isSum ? total + value : total * value));
-    }
-    default:
-      return "other";
-  }
 }
 
 const plainInteger = (text: string): string => text.replace(/^0+(?=\d)/, "");

@@ -78,7 +78,9 @@ describe("an entry document", () => {
 
   it.each([
     ["n = 3", { ...entry, amplitude: { n: 3, k: 0, loops: 0 } }, "amplitude-legs"],
-    ["n = 65", { ...entry, amplitude: { n: 65, k: 0, loops: 0 } }, "amplitude-legs"],
+    ["n = 65", { ...entry, amplitude: { n: 65, k: 0, loops: 0 } }, "limit-legs"],
+    ["a range to 65", { ...mhv, amplitude: { n: { from: 4, to: 65 }, k: 0, loops: 0 } }, "limit-legs"],
+    ["a long notation", { ...entry, notation: " ".repeat(2_000_001) }, "limit-source"],
     ["a fraction for n", { ...entry, amplitude: { n: 5.5, k: 0, loops: 0 } }, "amplitude-legs"],
     ["a text for n", { ...entry, amplitude: { n: "6", k: 0, loops: 0 } }, "amplitude-legs"],
     ["an empty range", { ...mhv, amplitude: { n: { from: 8, to: 5 }, k: 0, loops: 0 } }, "amplitude-range"],
@@ -90,7 +92,7 @@ describe("an entry document", () => {
     ],
     ["negative k", { ...entry, amplitude: { n: 6, k: -1, loops: 0 } }, "amplitude-degree"],
     ["negative loops", { ...entry, amplitude: { n: 6, k: 1, loops: -1 } }, "amplitude-loops"],
-    ["five loops", { ...entry, amplitude: { n: 6, k: 1, loops: 5 } }, "amplitude-loops"],
+    ["five loops", { ...entry, amplitude: { n: 6, k: 1, loops: 5 } }, "limit-loops"],
     ["no notation", { amplitude: entry.amplitude }, "entry-missing"],
     ["no amplitude", { notation: "1" }, "entry-missing"],
     ["no k", { ...entry, amplitude: { n: 6, loops: 0 } }, "entry-missing"],
