@@ -4,9 +4,11 @@ import type { Mark, MarkCode } from "../report";
 import { collinear } from "./collinear";
 import { cyclic } from "./cyclic";
 import { dualConformal } from "./dualConformal";
+import { factorisation } from "./factorisation";
 import { lineIndependent } from "./lineIndependent";
 import { localPoles } from "./localPoles";
 import { loopExchange } from "./loopExchange";
+import { parity } from "./parity";
 import { referenceIndependent } from "./referenceIndependent";
 import { reflection } from "./reflection";
 import { soft } from "./soft";
@@ -51,4 +53,11 @@ export const markChecks: readonly MarkCheck[] = [
   },
   { code: "soft", says: "has the soft limit of an amplitude", constraint: true, run: soft },
   { code: "collinear", says: "has the collinear limits of an amplitude", constraint: true, run: collinear },
+  {
+    code: "factorisation",
+    says: "factorises on its poles into smaller amplitudes",
+    constraint: true,
+    run: factorisation,
+  },
+  { code: "parity", says: "goes to the conjugate amplitude under parity", constraint: true, run: parity },
 ];

@@ -1,5 +1,5 @@
 /** Limits in which a leg disappears: the value must tend to that of the amplitude of the other legs (MARKS "Soft and collinear"). */
-import { type PrimeSeriesField, precisionOf, valuationOf } from "../../fields/primeSeries";
+import { type PrimeSeries, type PrimeSeriesField, precisionOf, valuationOf } from "../../fields/primeSeries";
 import type { Bench } from "../bench";
 import { type Ground, mostAttempts } from "../ground";
 import type { Mark } from "../report";
