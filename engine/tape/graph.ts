@@ -57,6 +57,8 @@ export class Graph {
   readonly nodes = new TupleTable();
   /** Slots of each node. */
   private widths = new Int32Array(1 << 12);
+  /** The operation of each node, kept apart from its operands: it is asked for far more often. */
+  private operations = new Uint8Array(1 << 12);
   readonly constants: Constant[] = [];
   private readonly integers = new Map<bigint, number>();
   private readonly quotients = new Map<bigint, Map<bigint, number>>();
@@ -85,8 +87,14 @@ export class Graph {
     const node = this.nodes.intern(this.tuple, length);
     if (node === before) {
       if (node >= this.limit) throw new GraphOverflow();
-      if (node >= this.widths.length) this.widths = grown(this.widths, node + 1);
+      if (node >= this.widths.length) {
+        this.widths = grown(this.widths, node + 1);
+        const operations = new Uint8Array(this.widths.length);
+        operations.set(this.operations);
+        this.operations = operations;
+      }
       this.widths[node] = width;
+      this.operations[node] = this.tuple[0]! & 255;
     }
     return node << 1;
   }
@@ -99,7 +107,7 @@ export class Graph {
   }
 
   operation(node: number): number {
-    return this.nodes.words[this.nodes.starts[node]!]! & 255;
+    return this.operations[node]!;
   }
 
   constant(numerator: bigint, denominator: bigint, span: Span): Ref {
