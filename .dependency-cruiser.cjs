@@ -90,7 +90,7 @@ const rules = layers.map(([name, path, allowed]) => ({
   name: `only-what-${name}-may-import`,
   severity: "error",
   comment: `${path} may import: ${allowed.join(", ") || "nothing"}`,
-  from: { path: name === "server" ? `${path}(?!cli/)` : path },
+  from: { path: name === "server" ? `${path}(?!cli/|start/)` : path },
   to: {
     path: "^(engine|app|prisma|seed-data|tests|e2e|generated|proxy|instrumentation)[/.]",
     pathNot: allowed.map((other) => folder[other]),
@@ -120,6 +120,14 @@ module.exports = {
       severity: "error",
       from: { path: "^app/_server/cli/" },
       to: { path: "^(engine|app)/", pathNot: ["^engine/", "^app/_server/"] },
+    },
+    {
+      name: "start-scripts-run-tools",
+      severity: "error",
+      comment:
+        "The start scripts run before anything is built: they import only scripts, the database tools among them.",
+      from: { path: "^app/_server/start/" },
+      to: { path: "^(engine|app|prisma|generated)/", pathNot: ["^app/_server/start/", "\\.mjs$"] },
     },
     {
       name: "e2e-speaks-http",

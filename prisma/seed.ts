@@ -2,7 +2,7 @@
 import { readdirSync, readFileSync } from "node:fs";
 import { join, relative, sep } from "node:path";
 import { database } from "../app/_server/db";
-import { environment } from "../app/_server/env";
+import { environmentOrExit } from "../app/_server/env";
 import { type SeedFile, submitSeeds } from "../app/_server/library";
 
 function documentsIn(folder: string): SeedFile[] {
@@ -24,6 +24,6 @@ function documentsIn(folder: string): SeedFile[] {
 
 // Started by another process with a channel to it: without that process nobody waits for the library.
 process.on("disconnect", () => process.exit(0));
-await submitSeeds(documentsIn(environment().seedFolder));
+await submitSeeds(documentsIn(environmentOrExit().seedFolder));
 await database().close();
 if (process.connected) process.disconnect();

@@ -74,3 +74,13 @@ export function environment(): Environment {
   parsed ??= parseEnvironment(process.env);
   return parsed;
 }
+
+/** The same for a program's first line: where it cannot be used, says so in one line and ends the process. */
+export function environmentOrExit(): Environment {
+  try {
+    return environment();
+  } catch (error) {
+    console.error(`equiform: ${(error as Error).message}`);
+    return process.exit(2);
+  }
+}

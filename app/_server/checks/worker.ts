@@ -2,11 +2,11 @@
 import { dirname, join } from "node:path";
 import { fileURLToPath } from "node:url";
 import { database } from "../db";
-import { environment } from "../env";
+import { environmentOrExit } from "../env";
 import { performAll } from "./perform";
 import { Slot } from "./slot";
 
-const { workers, leaseMilliseconds, checkMilliseconds, checkMemory } = environment();
+const { workers, leaseMilliseconds, checkMilliseconds, checkMemory } = environmentOrExit();
 const shutdown = new AbortController();
 for (const signal of ["SIGINT", "SIGTERM"] as const) process.on(signal, () => shutdown.abort());
 // Started by another process with a channel to it: without that process there is nobody to work for.

@@ -24,8 +24,11 @@ export function setDatabase(adapter: Adapter | undefined): void {
 
 export const read = (): Client => database().reader;
 
-/** Milliseconds that a transaction waits for its turn, and that it may take. */
-const limits = { maxWait: 30_000, timeout: 30_000 };
+/**
+ * Milliseconds that a transaction waits for its turn, and that it may take. A transaction that begins after Prisma gave up waiting for it
+ * would never end, so the first is longer than any adapter waits.
+ */
+const limits = { maxWait: 600_000, timeout: 30_000 };
 
 /** PostgreSQL's serialisation failure, deadlock and unique violation under a race, as Prisma names them. */
 const raced = new Set(["P2034", "P2002"]);

@@ -4,5 +4,5 @@ import { run } from "./run.mjs";
 
 await prepareCode(["worker", "check-thread", "seed"]);
 const environment = await settings();
-migrate(environment.databaseUrl);
+await migrate(environment.databaseUrl);
 await run("dev", environment);

@@ -10,24 +10,6 @@ export { root } from "./install.mjs";
 
 export const childEnvironment = () => ({ ...process.env, NEXT_TELEMETRY_DISABLED: "1" });
 
-/** Runs one step in a child process and ends this one if it fails; says what takes long. */
-function step(name, args, quiet) {
-  const started = Date.now();
-  const done = spawnSync(process.execPath, args, {
-    cwd: root,
-    env: childEnvironment(),
-    stdio: quiet ? ["ignore", "pipe", "pipe"] : "inherit",
-    encoding: "utf8",
-  });
-  if (done.status !== 0) {
-    if (quiet) process.stderr.write(`${done.stdout}${done.stderr}`);
-    console.error(`equiform: ${name} failed.`);
-    process.exit(1);
-  }
-  const seconds = (Date.now() - started) / 1000;
-  if (seconds > 1) console.error(`equiform: ${name} (${seconds.toFixed(0)} s)`);
-}
-
 /** The environment, validated; ends the process with one clear line where it cannot be used. */
 export async function settings() {
   const { bundle } = await import("./bundle.mjs");
@@ -72,20 +54,36 @@ function hashOfPages() {
   return hash.digest("hex");
 }
 
+/** Does one part in this process and ends it with a clear line if that fails. */
+async function part(name, work) {
+  try {
+    return await work();
+  } catch (error) {
+    // What a child said is on its own streams; an error of ours says everything in its message.
+    console.error(`equiform: ${name} failed: ${error.stderr?.toString().trim() || error.message}`);
+    process.exit(1);
+  }
+}
+
 /** Packages, clients, and the bundles named. */
 export async function prepareCode(programs) {
   checkNode();
   install();
-  exclusively("generate", () => step("database clients", ["prisma/generate.mjs"], true));
-  exclusively("kernel", () => step("kernel", ["engine/tape/kernel/build.mjs"], true));
+  // Imported only now: these need the packages.
+  const { generate } = await import("../../../prisma/generate.mjs");
+  await part("database clients", () => exclusively("generate", generate));
   // The pages hold the kernel too, so it is made even where no bundle is.
   const { ensureKernel } = await import("../../../engine/tape/kernel/build.mjs");
-  await ensureKernel();
+  await part("kernel", ensureKernel);
   const { bundle } = await import("./bundle.mjs");
-  for (const name of programs) await bundle(name);
+  for (const name of programs) await part(`bundle ${name}`, () => bundle(name));
 }
 
-export const migrate = (url) => step("database", ["prisma/migrate-deploy.mjs", url], false);
+/** Brings the database to today's schema. */
+export async function migrate(url) {
+  const { migrate: deploy } = await import("../../../prisma/migrate-deploy.mjs");
+  for (const name of await part("database", () => deploy(url))) console.error(`equiform: database: applied ${name}`);
+}
 
 /** Builds the pages unless they are those of today's sources. */
 export function buildPages() {
@@ -95,7 +93,18 @@ export function buildPages() {
     if (existsSync(join(root, ".next", "BUILD_ID")) && existsSync(stamp) && readFileSync(stamp, "utf8") === hash)
       return;
     console.error("equiform: building the pages (about half a minute)");
-    step("pages", ["node_modules/next/dist/bin/next", "build"], true);
+    const started = Date.now();
+    const done = spawnSync(process.execPath, ["node_modules/next/dist/bin/next", "build"], {
+      cwd: root,
+      env: childEnvironment(),
+      encoding: "utf8",
+    });
+    if (done.status !== 0) {
+      process.stderr.write(`${done.stdout}${done.stderr}`);
+      console.error("equiform: the pages could not be built; the messages are above.");
+      process.exit(1);
+    }
     writeFileSync(stamp, hash);
+    console.error(`equiform: pages built (${((Date.now() - started) / 1000).toFixed(0)} s)`);
   });
 }

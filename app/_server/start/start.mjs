@@ -5,6 +5,6 @@ import { run } from "./run.mjs";
 process.env.NODE_ENV = "production";
 await prepareCode(["worker", "check-thread", "seed"]);
 const environment = await settings();
-migrate(environment.databaseUrl);
+await migrate(environment.databaseUrl);
 buildPages();
 await run("start", environment);
