@@ -33,7 +33,7 @@ export function PoleTable({ poles, label }: { poles: readonly Pole[]; label: str
       <tbody>
         {ordered.map((pole) => (
           <tr key={pole.bracket}>
-            <th scope="row">
+            <th scope="row" aria-label={pole.bracket}>
               <Bracket text={pole.bracket} />
             </th>
             <td>
