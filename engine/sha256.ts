@@ -87,8 +87,11 @@ export class Sha256 {
 
   private compress(): void {
     const w = this.schedule;
-    const view = new DataView(this.block.buffer);
-    for (let t = 0; t < 16; t++) w[t] = view.getInt32(4 * t);
+    const { block, state } = this;
+    for (let t = 0; t < 16; t++) {
+      const at = 4 * t;
+      w[t] = (block[at]! << 24) | (block[at + 1]! << 16) | (block[at + 2]! << 8) | block[at + 3]!;
+    }
     for (let t = 16; t < 64; t++) {
       const early = w[t - 15]!;
       const late = w[t - 2]!;
@@ -96,16 +99,15 @@ export class Sha256 {
       const sigma1 = rotate(late, 17) ^ rotate(late, 19) ^ (late >>> 10);
       w[t] = (w[t - 16]! + sigma0 + w[t - 7]! + sigma1) | 0;
     }
-    let [a, b, c, d, e, f, g, h] = this.state as unknown as [
-      number,
-      number,
-      number,
-      number,
-      number,
-      number,
-      number,
-      number,
-    ];
+    // Read and written one by one: taking the state apart as a list would go through an iterator for each block.
+    let a = state[0]!;
+    let b = state[1]!;
+    let c = state[2]!;
+    let d = state[3]!;
+    let e = state[4]!;
+    let f = state[5]!;
+    let g = state[6]!;
+    let h = state[7]!;
     for (let t = 0; t < 64; t++) {
       const sum1 = rotate(e, 6) ^ rotate(e, 11) ^ rotate(e, 25);
       const first = (h + sum1 + ((e & f) ^ (~e & g)) + ROUND_CONSTANTS[t]! + w[t]!) | 0;
@@ -120,9 +122,14 @@ export class Sha256 {
       b = a;
       a = (first + second) | 0;
     }
-    [a, b, c, d, e, f, g, h].forEach((word, i) => {
-      this.state[i] = (this.state[i]! + word) | 0;
-    });
+    state[0] = (state[0]! + a) | 0;
+    state[1] = (state[1]! + b) | 0;
+    state[2] = (state[2]! + c) | 0;
+    state[3] = (state[3]! + d) | 0;
+    state[4] = (state[4]! + e) | 0;
+    state[5] = (state[5]! + f) | 0;
+    state[6] = (state[6]! + g) | 0;
+    state[7] = (state[7]! + h) | 0;
   }
 }
 

@@ -8,28 +8,44 @@ export interface Randomness {
   below(bound: bigint): bigint;
 }
 
-const BLOCK_BITS = 256n;
+const WORD = 2 ** 32;
 
 /**
- * The stream of a seed: SHA-256 of `equiform-stream-1|seed|0`, `...|1`, ... read as big-endian numbers, as many blocks a draw as
- * the bound needs and 64 bits more; a draw above the largest multiple of the bound is thrown away, so that draws are uniform.
+ * The stream of a seed: SHA-256 of `equiform-stream-1|seed|0`, `...|1`, ... read as big-endian words of 32 bits, eight a block. A draw
+ * below a bound takes the fewest words that can hold bound - 1, the first one leading; a draw that is not below the largest multiple
+ * of the bound that they can reach is thrown away, so that draws are uniform, and the remainder modulo the bound is the result.
  */
 export function randomness(seed: string): Randomness {
   const encoder = new TextEncoder();
   let counter = 0;
-  const block = (): bigint => {
-    const digest = sha256(encoder.encode(`equiform-stream-1|${seed}|${counter++}`));
-    return digest.reduce((x, byte) => (x << 8n) | BigInt(byte), 0n);
+  let block = new DataView(new ArrayBuffer(0));
+  let at = 0;
+  const word = (): number => {
+    if (at === block.byteLength) {
+      block = new DataView(sha256(encoder.encode(`equiform-stream-1|${seed}|${counter++}`)).buffer);
+      at = 0;
+    }
+    at += 4;
+    return block.getUint32(at - 4);
   };
   return {
     below(bound) {
       if (bound < 1n) throw new Error(`randomness.below: expected a bound >= 1, got ${bound}`);
+      if (bound <= WORD) {
+        // The general rule in machine numbers: nearly all draws are residues modulo primes of 31 bits.
+        const small = Number(bound);
+        const end = WORD - (WORD % small);
+        for (;;) {
+          const x = word();
+          if (x < end) return BigInt(x % small);
+        }
+      }
       for (;;) {
-        let x = block();
-        let range = 1n << BLOCK_BITS;
-        while (range >> 64n < bound) {
-          x = (x << BLOCK_BITS) | block();
-          range <<= BLOCK_BITS;
+        let x = BigInt(word());
+        let range = BigInt(WORD);
+        while (range < bound) {
+          x = (x << 32n) | BigInt(word());
+          range <<= 32n;
         }
         if (x < range - (range % bound)) return x % bound;
       }
