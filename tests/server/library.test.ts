@@ -217,7 +217,7 @@ onEachDatabase("the library", (url) => {
       expect(await getAmplitude(localUser, key)).toBeNull();
   });
 
-  it("submits each seed document once, however often it is started, and says which cannot be read", async () => {
+  it("submits each document of the seed library once, however often it is started, and says which cannot be read", async () => {
     const files = [
       { path: "a.json", text: JSON.stringify(entry(1)) },
       { path: "b/c.json", text: JSON.stringify(entry(2)) },
