@@ -2,9 +2,32 @@ import type { Comparison, LeftOut } from "../../engine/checks/report";
 import { formIdPattern } from "../_contract";
 import { Bound } from "./Bound";
 import { TableBox } from "./TableBox";
+import { capital, numbered } from "./words";
 
-/** What a form was compared with, each with the number of points and primes and the bound that follows. */
-export function ComparisonTable({ comparisons, label }: { comparisons: readonly Comparison[]; label: string }) {
+/** Rows shown before the rest is folded: the sources and the first forms. */
+const SHOWN = 8;
+
+/** What a form was compared with; where that is much the rest is folded. */
+export function Comparisons({ comparisons, label }: { comparisons: readonly Comparison[]; label: string }) {
+  if (comparisons.length <= SHOWN + 4) return <ComparisonTable comparisons={comparisons} label={label} />;
+  const rest = comparisons.slice(SHOWN);
+  const agreeing = rest.filter((comparison) => comparison.agrees).length;
+  return (
+    <>
+      <ComparisonTable comparisons={comparisons.slice(0, SHOWN)} label={label} />
+      <details>
+        <summary>
+          {capital(numbered(rest.length, "more comparison"))}, of which{" "}
+          {agreeing === rest.length ? "all agree" : `${numbered(agreeing, "agrees", "agree")}`}
+        </summary>
+        <ComparisonTable comparisons={rest} label={`${label}, continued`} />
+      </details>
+    </>
+  );
+}
+
+/** One row for each comparison, with the number of points and primes and the bound that follows. */
+function ComparisonTable({ comparisons, label }: { comparisons: readonly Comparison[]; label: string }) {
   const ranged = comparisons.some((comparison) => comparison.n !== undefined);
   return (
     <TableBox label={label}>

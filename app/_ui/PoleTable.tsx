@@ -1,7 +1,7 @@
 import type { Pole } from "../../engine/checks/report";
 import { Bracket } from "./Formula";
 import { TableBox } from "./TableBox";
-import { numbered } from "./words";
+import { capital, numbered } from "./words";
 
 /** The order of a pole in words: "none", "simple", "double", "a zero". */
 function order(value: number | undefined): string {
@@ -16,7 +16,25 @@ function termsOf(pole: Pole): string {
   return pole.terms.map((index) => index + 1).join(", ");
 }
 
-/** Poles of a form: physical ones first, each with where it stands and its order there and in the sum. */
+/** Longer tables are folded, one for each kind. */
+const SHOWN = 20;
+
+/** Poles of a form in a table, or, where they are many, in a sentence with a folded table for each kind. */
+export function Poles({ poles, label }: { poles: readonly Pole[]; label: string }) {
+  if (poles.length <= SHOWN) return <PoleTable poles={poles} label={label} />;
+  return (["physical", "spurious"] as const).map((kind) => {
+    const those = poles.filter((pole) => pole.kind === kind);
+    if (those.length === 0) return null;
+    return (
+      <details key={kind}>
+        <summary>{capital(numbered(those.length, `${kind} pole`))}</summary>
+        <PoleTable poles={those} label={`${label}, ${kind}`} />
+      </details>
+    );
+  });
+}
+
+/** A table of poles: physical ones first, each with where it stands and its order there and in the sum. */
 export function PoleTable({ poles, label }: { poles: readonly Pole[]; label: string }) {
   const ordered = (["physical", "spurious"] as const).flatMap((kind) => poles.filter((pole) => pole.kind === kind));
   return (

@@ -31,11 +31,9 @@ export function StateSentence({ state, report }: { state: VersionState; report: 
   if (state === "accepted") {
     const agreeing = report.comparisons.filter((comparison) => comparison.agrees);
     const bound = weakestBound(agreeing);
-    const names = [...new Set(agreeing.map((comparison) => comparison.with))];
-    const shown = names.length > 4 ? [...names.slice(0, 3), numbered(names.length - 3, "other")] : names;
     return (
       <>
-        Accepted: it agrees with <Names names={shown} />
+        Accepted: it agrees with <Names names={few(agreeing)} />
         {report.range !== undefined && report.range.length > 1 && <> for n = {report.range.join(", ")}</>}
         {bound !== null && (
           <>
@@ -55,6 +53,23 @@ export function StateSentence({ state, report }: { state: VersionState; report: 
   return (
     <>
       Not accepted: <Prose text={reason(report.summary)} />
+    </>
+  );
+}
+
+/** The names in a sentence, at most four: the rest is counted. */
+function few(comparisons: readonly Comparison[]): readonly string[] {
+  const names = [...new Set(comparisons.map((comparison) => comparison.with))];
+  return names.length > 4 ? [...names.slice(0, 3), numbered(names.length - 3, "other")] : names;
+}
+
+/** Why a form is wrong, in a sentence that does not repeat the diagnosis: what it differs from, or the report's own words. */
+export function DifferenceSentence({ report }: { report: Report }) {
+  const differing = report.comparisons.filter((comparison) => !comparison.agrees);
+  if (differing.length === 0 || report.diagnosis.length === 0) return <Prose text={report.summary} />;
+  return (
+    <>
+      It differs from <Names names={few(differing)} />.
     </>
   );
 }

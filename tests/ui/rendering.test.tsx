@@ -1,11 +1,13 @@
 import { renderToStaticMarkup } from "react-dom/server";
 import { describe, expect, it } from "vitest";
 import { Bound } from "../../app/_ui/Bound";
+import { Comparisons } from "../../app/_ui/ComparisonTable";
 import { Diagnostics } from "../../app/_ui/Diagnostics";
 import { Formula } from "../../app/_ui/Formula";
 import { bracketLatex, renderLatex } from "../../app/_ui/latex";
 import { markSentence, marks } from "../../app/_ui/marks";
-import { StateSentence, weakestBound } from "../../app/_ui/StateSentence";
+import { Poles } from "../../app/_ui/PoleTable";
+import { DifferenceSentence, StateSentence, weakestBound } from "../../app/_ui/StateSentence";
 import { listed, numbered } from "../../app/_ui/words";
 import { markCodes, type Report } from "../../engine/checks/report";
 
@@ -84,6 +86,36 @@ describe("sentences", () => {
     const held = { ...report, summary: "Undecided: there is nothing to compare with." };
     expect(renderToStaticMarkup(<StateSentence state="held" report={held} />)).toBe(
       "Held: there is nothing to compare with.",
+    );
+  });
+
+  it("say what a wrong form differs from and leave the cause to the diagnosis", () => {
+    const differing = (name: string) => ({ with: name, kind: "form" as const, agrees: false, points: 1, primes: 1 });
+    const wrong: Report = {
+      ...report,
+      comparisons: ["a", "b", "c", "d", "e"].map(differing),
+      diagnosis: [{ code: "constant-factor", message: "The form is twice the truth." }],
+    };
+    expect(text(renderToStaticMarkup(<DifferenceSentence report={wrong} />))).toBe(
+      "It differs from a, b, c and two others.",
+    );
+    const unexplained = renderToStaticMarkup(<DifferenceSentence report={{ ...wrong, diagnosis: [] }} />);
+    expect(unexplained).toBe("Disagrees: The form is twice the truth.");
+  });
+
+  it("fold long tables and count what is folded", () => {
+    const pole = { kind: "spurious" as const, reference: false, terms: [0] };
+    const poles = Array.from({ length: 30 }, (_, index) => ({ ...pole, bracket: `<1 2 3 ${index}>` }));
+    const table = renderToStaticMarkup(<Poles poles={poles} label="p" />);
+    expect(table).toContain("<summary>30 spurious poles</summary>");
+    expect(table.match(/<tr>/g)).toHaveLength(31);
+    const comparisons = Array.from({ length: 20 }, (_, index) => ({
+      ...(report.comparisons[1] as Report["comparisons"][number]),
+      with: `n6k1L0-${index + 1}v1`,
+      agrees: index !== 19,
+    }));
+    expect(text(renderToStaticMarkup(<Comparisons comparisons={comparisons} label="c" />))).toContain(
+      "12 more comparisons, of which 11 agree",
     );
   });
 

@@ -1,11 +1,11 @@
 import type { FormView } from "../../_contract";
 import { CiteBox } from "../../_ui/CiteBox";
-import { ComparisonTable, LeftOutSentences } from "../../_ui/ComparisonTable";
+import { Comparisons, LeftOutSentences } from "../../_ui/ComparisonTable";
 import { Diagnosis } from "../../_ui/Diagnosis";
 import { Formula } from "../../_ui/Formula";
 import { Marks } from "../../_ui/MarkSentence";
 import { Lead, Opening, Page, Section } from "../../_ui/Page";
-import { PoleTable } from "../../_ui/PoleTable";
+import { Poles } from "../../_ui/PoleTable";
 import { ReferenceList } from "../../_ui/ReferenceList";
 import { SourceText } from "../../_ui/SourceText";
 import { StateSentence, stateWords } from "../../_ui/StateSentence";
@@ -70,7 +70,7 @@ export function FormArticle({ form, bibtex, from }: { form: FormView; bibtex: st
       {report !== null && report.poles.length > 0 && (
         <Section id="poles" head="Poles">
           <p>Brackets in the denominators, the terms that hold them, and the order of the pole there and in the sum.</p>
-          <PoleTable poles={report.poles} label={`Poles of ${form.version}`} />
+          <Poles poles={report.poles} label={`Poles of ${form.version}`} />
         </Section>
       )}
 
@@ -80,7 +80,7 @@ export function FormArticle({ form, bibtex, from }: { form: FormView; bibtex: st
             Values at random points over prime fields, with primes drawn after the form was submitted. Two different
             forms agree at all of these points with a probability below the bound; it is not a symbolic proof.
           </p>
-          <ComparisonTable comparisons={report.comparisons} label={`What ${form.version} was compared with`} />
+          <Comparisons comparisons={report.comparisons} label={`What ${form.version} was compared with`} />
           <LeftOutSentences leftOut={report.leftOut} />
         </Section>
       )}

@@ -4,11 +4,11 @@ import { Diagnostics } from "../../_ui/Diagnostics";
 import { Formula } from "../../_ui/Formula";
 import { Marks } from "../../_ui/MarkSentence";
 import { Lead, Opening, Page, Section } from "../../_ui/Page";
-import { PoleTable } from "../../_ui/PoleTable";
+import { Poles } from "../../_ui/PoleTable";
 import { SeedProgressLine } from "../../_ui/SeedProgressLine";
 import { StateSentence } from "../../_ui/StateSentence";
 import { Triangle } from "../../_ui/Triangle";
-import { accepted, faults, faulty, longFormula, rows, shortFormula, wideFormula } from "./samples";
+import { accepted, faults, faulty, longFormula, manyPoles, rows, shortFormula, wideFormula } from "./samples";
 
 export const metadata: Metadata = { title: "The parts of the pages", robots: { index: false } };
 
@@ -39,7 +39,8 @@ export default function Specimen() {
         <Marks marks={accepted.marks} />
       </Section>
       <Section id="poles" head="Poles">
-        <PoleTable poles={accepted.poles} label="Poles" />
+        <Poles poles={accepted.poles} label="Poles" />
+        <Poles poles={manyPoles} label="Many poles" />
       </Section>
       <Section id="faults" head="Faults">
         <Diagnostics source={faulty} diagnostics={faults} />

@@ -56,6 +56,13 @@ export const accepted: Report = {
   summary: "",
 };
 
+export const manyPoles: Report["poles"] = Array.from({ length: 30 }, (_, index) => ({
+  bracket: `<1 2 ${index + 3} ${index + 4}>`,
+  kind: index % 3 === 0 ? "physical" : "spurious",
+  reference: false,
+  terms: [index],
+}));
+
 export const faulty = "[1 2 3 4 5] + <AB12>\n+ [1 2 3 4 n+q] / (1 2";
 
 export const faults: Report["diagnostics"] = [

@@ -1,11 +1,11 @@
 import type { CheckView } from "../../../_contract";
-import { ComparisonTable, LeftOutSentences } from "../../../_ui/ComparisonTable";
+import { Comparisons, LeftOutSentences } from "../../../_ui/ComparisonTable";
 import { Diagnosis } from "../../../_ui/Diagnosis";
 import { Marks } from "../../../_ui/MarkSentence";
 import { Lead, Opening, Page, Section } from "../../../_ui/Page";
 import { Prose } from "../../../_ui/Prose";
 import { SourceText } from "../../../_ui/SourceText";
-import { StateSentence } from "../../../_ui/StateSentence";
+import { DifferenceSentence, StateSentence } from "../../../_ui/StateSentence";
 
 type Report = NonNullable<CheckView["report"]>;
 
@@ -23,7 +23,15 @@ export function VerdictArticle({ check, report }: { check: CheckView; report: Re
   return (
     <Page>
       <Opening kicker={check.title ?? check.version} title={accepted ? "Accepted" : titles[report.verdict]}>
-        <Lead>{accepted ? <StateSentence state="accepted" report={report} /> : <Prose text={report.summary} />}</Lead>
+        <Lead>
+          {accepted ? (
+            <StateSentence state="accepted" report={report} />
+          ) : report.verdict === "disagrees" ? (
+            <DifferenceSentence report={report} />
+          ) : (
+            <Prose text={report.summary} />
+          )}
+        </Lead>
         <p>{nextSteps(check, report)}</p>
       </Opening>
       {wrong && (
@@ -40,7 +48,7 @@ export function VerdictArticle({ check, report }: { check: CheckView; report: Re
       {report.comparisons.length + report.leftOut.length > 0 && (
         <Section id="comparisons" head="Compared with">
           {report.comparisons.length > 0 && (
-            <ComparisonTable comparisons={report.comparisons} label="What it was compared with" />
+            <Comparisons comparisons={report.comparisons} label="What it was compared with" />
           )}
           <LeftOutSentences leftOut={report.leftOut} />
         </Section>
