@@ -7,12 +7,17 @@ import { dualConformal } from "./dualConformal";
 import { factorisation } from "./factorisation";
 import { lineIndependent } from "./lineIndependent";
 import { localPoles } from "./localPoles";
+import { logarithmic } from "./logarithmic";
+import { logTest } from "./logTest";
 import { loopExchange } from "./loopExchange";
 import { parity } from "./parity";
+import { ratioTest } from "./ratioTest";
 import { referenceIndependent } from "./referenceIndependent";
 import { reflection } from "./reflection";
 import { soft } from "./soft";
 import { spuriousCancel } from "./spuriousCancel";
+import { twoParticleCuts } from "./twoParticleCuts";
+import { unitLeadingSingularities } from "./unitLeadingSingularities";
 
 export interface MarkCheck {
   readonly code: MarkCode;
@@ -60,4 +65,24 @@ export const markChecks: readonly MarkCheck[] = [
     run: factorisation,
   },
   { code: "parity", says: "goes to the conjugate amplitude under parity", constraint: true, run: parity },
+  {
+    code: "twoParticleCuts",
+    says: "has two-particle cuts that are products of lower amplitudes",
+    constraint: true,
+    run: twoParticleCuts,
+  },
+  {
+    code: "unitLeadingSingularities",
+    says: "has the leading singularities of an amplitude",
+    constraint: true,
+    run: unitLeadingSingularities,
+  },
+  { code: "logTest", says: "has a logarithm that is less divergent", constraint: true, run: logTest },
+  {
+    code: "ratioTest",
+    says: "is less divergent once its tree times the MHV integrand is subtracted",
+    constraint: true,
+    run: ratioTest,
+  },
+  { code: "logarithmic", says: "has logarithmic singularities only", constraint: false, run: logarithmic },
 ];
