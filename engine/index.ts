@@ -15,6 +15,8 @@ export {
   checkForm,
   defaultBudget,
   engineVersion,
+  type LiveVerdict,
+  liveVerdict,
   markChecks,
   pointsVersion,
   protocolVersion,

@@ -8,6 +8,7 @@ export {
   defaultBudget,
   unreadable,
 } from "./check";
+export { type LiveVerdict, liveVerdict } from "./live";
 export { markChecks } from "./marks";
 export * from "./report";
 export type { SizeEvidence } from "./size";
