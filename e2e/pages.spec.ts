@@ -5,6 +5,8 @@ import { sixLegs, submit, verdict } from "./support/library";
 
 const pages: Record<string, string> = {};
 
+test.describe.configure({ timeout: 120_000 });
+
 test.beforeAll(async ({ request }) => {
   const kept = await submit(request, sixLegs);
   expect(await verdict(request, kept.check)).toBe("agrees");

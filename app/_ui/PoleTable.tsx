@@ -51,8 +51,11 @@ export function PoleTable({ poles, label }: { poles: readonly Pole[]; label: str
       <tbody>
         {ordered.map((pole) => (
           <tr key={pole.bracket}>
-            <th scope="row" aria-label={pole.bracket}>
-              <Bracket text={pole.bracket} />
+            <th scope="row">
+              <span aria-hidden="true">
+                <Bracket text={pole.bracket} />
+              </span>
+              <span className="visually-hidden">{pole.bracket}</span>
             </th>
             <td>
               {pole.kind}

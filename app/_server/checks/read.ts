@@ -23,13 +23,19 @@ export function reportOf(text: string | null): Report | null {
   return parsed.success ? parsed.data : null;
 }
 
-/** The check `id`, or null if there is none that `principal` may see. */
+/**
+ * The check `id`, or null if there is none that `principal` may see. The job is read after the check's own row: where the check ends in
+ * between, the job is done and the report seems missing, so both are read again.
+ */
 export async function getCheck(principal: Principal, id: string): Promise<CheckView | null> {
   if (!checkIdPattern.test(id)) return null;
-  const row = await read().check.findFirst({
-    where: seenBy(principal, id),
-    include: { job: true, version: { include: { form: true } } },
-  });
+  const find = () =>
+    read().check.findFirst({
+      where: seenBy(principal, id),
+      include: { job: true, version: { include: { form: true } } },
+    });
+  let row = await find();
+  if (row?.job?.state === "done" && row.report === null) row = await find();
   if (!row?.job) return null;
   const { job, version } = row;
   const form = version ? formIdOf(version.form) : null;
@@ -65,9 +71,9 @@ export async function* watchCheck(
 ): AsyncGenerator<CheckEvent> {
   let last = afterSeq;
   while (!signal.aborted) {
-    const row = checkIdPattern.test(id)
-      ? await read().check.findFirst({ where: seenBy(principal, id), select: { verdict: true, job: true } })
-      : null;
+    const find = () => read().check.findFirst({ where: seenBy(principal, id), select: { verdict: true, job: true } });
+    let row = checkIdPattern.test(id) ? await find() : null;
+    if (row?.job?.state === "done" && row.verdict === null) row = await find();
     if (!row?.job) return;
     const { job } = row;
     const state = job.state as CheckState;
