@@ -123,12 +123,11 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
     marks[check.code] = check.run(bench);
   }
   const broken = markChecks.filter((check) => check.constraint && marks[check.code]?.state === "fails");
+  // An accepted form that was left out must not be contradicted later: only a source of truth can stand in for it.
+  const missing = leftOut.some((l) => options.accepted.some((a) => a.name === l.with));
+  const enough = missing ? comparisons.some((c) => c.kind === "source") : comparisons.length > 0;
   const verdict =
-    disagrees || broken.length > 0 || weights.faults.length > 0
-      ? "disagrees"
-      : comparisons.length === 0
-        ? "undecided"
-        : "agrees";
+    disagrees || broken.length > 0 || weights.faults.length > 0 ? "disagrees" : enough ? "agrees" : "undecided";
   const reason = verdict === "undecided" ? (leftOut[0]?.reason ?? "nothing-to-compare") : undefined;
   return {
     n: form.n,

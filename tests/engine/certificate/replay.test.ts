@@ -30,13 +30,55 @@ describe("a certificate", () => {
   });
 
   it.each<[string, (c: ReturnType<typeof certificate>) => void, string]>([
-    ["a value of the form", (c) => { c.evidence[0]!.samples[2]!.value += 1; }, "evidence.0.samples.2.value"],
-    ["a value of a source", (c) => { c.evidence[0]!.truths[0]!.values[0]! += 1; }, "evidence.0.truths.0.values.0"],
-    ["a prime", (c) => { c.evidence[0]!.samples[0]!.prime += 2; }, "evidence.0.samples.0.prime"],
-    ["the verdict", (c) => { c.report.verdict = "disagrees"; }, "report.verdict"],
-    ["a bound", (c) => { c.report.comparisons[0]!.bound = "2^-999"; }, "report.comparisons.0.bound"],
-    ["a mark", (c) => { c.report.marks.cyclic!.manifest = true; }, "report.marks.cyclic.manifest"],
-    ["the digest", (c) => { c.subject.digest = c.subject.digest.replace(/.$/, (d) => (d === "0" ? "1" : "0")); }, "subject.digest"],
+    [
+      "a value of the form",
+      (c) => {
+        c.evidence[0]!.samples[2]!.value += 1;
+      },
+      "evidence.0.samples.2.value",
+    ],
+    [
+      "a value of a source",
+      (c) => {
+        c.evidence[0]!.truths[0]!.values[0]! += 1;
+      },
+      "evidence.0.truths.0.values.0",
+    ],
+    [
+      "a prime",
+      (c) => {
+        c.evidence[0]!.samples[0]!.prime += 2;
+      },
+      "evidence.0.samples.0.prime",
+    ],
+    [
+      "the verdict",
+      (c) => {
+        c.report.verdict = "disagrees";
+      },
+      "report.verdict",
+    ],
+    [
+      "a bound",
+      (c) => {
+        c.report.comparisons[0]!.bound = "2^-999";
+      },
+      "report.comparisons.0.bound",
+    ],
+    [
+      "a mark",
+      (c) => {
+        c.report.marks.cyclic!.manifest = true;
+      },
+      "report.marks.cyclic.manifest",
+    ],
+    [
+      "the digest",
+      (c) => {
+        c.subject.digest = c.subject.digest.replace(/.$/, (d) => (d === "0" ? "1" : "0"));
+      },
+      "subject.digest",
+    ],
   ])("with %s changed is found out, and the place is named", (_, change, path) => {
     const changed = structuredClone(certificate());
     change(changed);
@@ -52,7 +94,11 @@ describe("a certificate", () => {
   it.each([
     ["no JSON", "{", "not-json"],
     ["another document", "{}", "not-a-certificate"],
-    ["a newer protocol", JSON.stringify({ ...certificate(), versions: { points: "1", protocol: "999", engine: "1" } }), "other-version"],
+    [
+      "a newer protocol",
+      JSON.stringify({ ...certificate(), versions: { points: "1", protocol: "999", engine: "1" } }),
+      "other-version",
+    ],
   ])("that is %s gets a diagnostic", (_, text, code) => {
     const result = replay(text);
     expect(result.ok ? [] : result.diagnostics.map((d) => d.code)).toContain(code);
