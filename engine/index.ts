@@ -26,6 +26,7 @@ export * from "./checks/report";
 export { type DeriveRequest, derive, deriveMethods } from "./derive";
 export {
   allHelicities,
+  countHelicities,
   evaluateForm,
   helicityPattern,
   mostValues,
@@ -34,9 +35,11 @@ export {
   type PointRemark,
   type PointSource,
   readHelicities,
+  seedUsed,
   type ValueColumn,
   type ValueRequest,
   type ValueTable,
+  valueReply,
   valuesOf,
   type WrittenNumber,
 } from "./evaluate";

@@ -1,6 +1,7 @@
 /** `value`: a form at points, or its gluon components. */
 import {
   allHelicities,
+  countHelicities,
   type Diagnostic,
   type Form,
   type FormAtN,
@@ -10,19 +11,20 @@ import {
   type NumberKind,
   numberKinds,
   type PointSource,
-  pointUse,
   type Result,
   readEntry,
   readHelicities,
+  seedUsed,
   success,
   type ValueTable,
+  valueReply,
   valuesOf,
 } from "../index";
 import { type Call, type Command, type Exit, integerOption, Usage } from "./command";
 import { readText } from "./files";
 import { diagnosticsText, printJson } from "./print";
 import { freshSeed } from "./seed";
-import { tableJson, tableText } from "./valueTable";
+import { tableText } from "./valueTable";
 
 const mostRandom = 10_000;
 
@@ -81,7 +83,7 @@ async function run(call: Call): Promise<Exit> {
   if (!table.ok) return fail(call, table.diagnostics);
   const seed = seedUsed(form, source.value);
   const many = call.has("all-helicities");
-  if (call.json) printJson(call, tableJson(table.value, many, seed));
+  if (call.json) printJson(call, valueReply(table.value, many, seed));
   else {
     call.io.stdout.write(tableText(table.value, many));
     for (const warning of warningLines(table.value)) call.io.stderr.write(`${warning}\n`);
@@ -120,8 +122,7 @@ function helicitiesAsked(call: Call, form: FormAtN): (readonly number[] | null)[
     if (pattern !== null) throw new Usage("give either --helicities or --all-helicities");
     if (form.negativeLegs !== null) throw new Usage("--all-helicities: this form is one component");
     // Counted before they are written out: C(n, k+2) is beyond all memory for n = 64.
-    let count = 1;
-    for (let i = 1; i <= form.k + 2; i++) count = (count * (form.n - form.k - 2 + i)) / i;
+    const count = countHelicities(form.n, form.k);
     if (count > mostValues)
       throw new Usage(`--all-helicities: there are ${count} of them, and at most ${mostValues} values in one call`);
     return allHelicities(form.n, form.k);
@@ -147,13 +148,6 @@ async function sourceAsked(call: Call): Promise<Result<PointSource>> {
   } catch {
     return failure({ code: `${what}-json`, message: `${file} is not JSON.`, help: `Give a ${what} document.` });
   }
-}
-
-/** The seed that the values depend on: with momenta it draws the references, where the form has any. */
-function seedUsed(form: FormAtN, source: PointSource): string | null {
-  if (source.kind === "points") return null;
-  const use = pointUse(form);
-  return source.kind === "random" || use.referenceTwistor || use.referenceLine ? source.seed : null;
 }
 
 function fail(call: Call, diagnostics: readonly Diagnostic[]): Exit {

@@ -1,30 +1,5 @@
-/** How values at points are printed. */
+/** How values at points are printed on a terminal. */
 import type { ValueColumn, ValueTable, WrittenNumber } from "../index";
-
-/** One column as the reply of `value`: what does not apply is left out. */
-function columnJson({ values, reasons, errors, digits }: ValueColumn): Record<string, unknown> {
-  return {
-    values,
-    ...(errors === undefined ? {} : { errors }),
-    ...(digits === undefined ? {} : { digits }),
-    ...(reasons.length === 0 ? {} : { reasons }),
-  };
-}
-
-/**
- * `{"values": [...]}` for one column; `{"components": [{"helicities", "values"}, ...]}` for many. With `errors` and `digits` in
- * double precision, `reasons` where a value is null, `warnings` where digits are lost, and `seed` where one was used.
- */
-export function tableJson(table: ValueTable, many: boolean, seed: string | null): Record<string, unknown> {
-  const [first] = table.columns;
-  const named = (column: ValueColumn): Record<string, unknown> =>
-    column.helicities === null ? columnJson(column) : { helicities: column.helicities, ...columnJson(column) };
-  return {
-    ...(many || first === undefined ? { components: table.columns.map(named) } : named(first)),
-    ...(table.warnings.length === 0 ? {} : { warnings: table.warnings }),
-    ...(seed === null ? {} : { seed }),
-  };
-}
 
 function numberText(x: WrittenNumber): string {
   if (typeof x === "string") return x;

@@ -5,5 +5,6 @@ export { type FormAtN, type FormSource, formAt, inDualPoints, pointUse } from ".
 export { type NumberKind, numberKinds, type PointRemark, type PointSource, type WrittenNumber } from "./givenPoints";
 export { allHelicities, type HelicityPoint, helicityPattern, helicityPoint, readHelicities } from "./helicity";
 export { type Approximation, evaluateApproximately, type NoValue } from "./precision";
+export { countHelicities, seedUsed, valueReply } from "./reply";
 export { type FormSize, sizeBound } from "./size";
 export { mostValues, type ValueColumn, type ValueRequest, type ValueTable, valuesOf } from "./table";
