@@ -10,12 +10,14 @@ import { localPoles } from "./localPoles";
 import { logarithmic } from "./logarithmic";
 import { logTest } from "./logTest";
 import { loopExchange } from "./loopExchange";
+import { oneSign } from "./oneSign";
 import { parity } from "./parity";
 import { ratioTest } from "./ratioTest";
 import { referenceIndependent } from "./referenceIndependent";
 import { reflection } from "./reflection";
 import { soft } from "./soft";
 import { spuriousCancel } from "./spuriousCancel";
+import { termsOneSign } from "./termsOneSign";
 import { twoParticleCuts } from "./twoParticleCuts";
 import { unitLeadingSingularities } from "./unitLeadingSingularities";
 
@@ -85,4 +87,11 @@ export const markChecks: readonly MarkCheck[] = [
     run: ratioTest,
   },
   { code: "logarithmic", says: "has logarithmic singularities only", constraint: false, run: logarithmic },
+  { code: "oneSign", says: "has one sign on positive kinematics", constraint: false, run: oneSign },
+  {
+    code: "termsOneSign",
+    says: "is a sum of terms of one sign on positive kinematics",
+    constraint: false,
+    run: termsOneSign,
+  },
 ];
