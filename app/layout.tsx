@@ -7,6 +7,7 @@ import "./globals.css";
 import { PageFoot } from "./_ui/PageFoot";
 import { PageHead } from "./_ui/PageHead";
 
+// A face that is not there when the page is first painted waits for the next page, so that no line moves.
 const text = localFont({
   src: [
     {
@@ -22,7 +23,7 @@ const text = localFont({
   ],
   variable: "--face-text",
   adjustFontFallback: "Times New Roman",
-  display: "swap",
+  display: "optional",
 });
 
 const code = localFont({
@@ -32,7 +33,7 @@ const code = localFont({
   ],
   variable: "--face-code",
   adjustFontFallback: false,
-  display: "swap",
+  display: "optional",
 });
 
 /** Every page is made for its request: it shows what the library holds now, under a policy with a nonce of its own. */
