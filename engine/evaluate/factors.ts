@@ -6,34 +6,63 @@ export interface Bound {
   readonly bits: number;
 }
 
-/** A rational function N/D: exponents (at least 1) of the numbered factors of N and of D. Nothing is cancelled between them. */
+/** A product of powers of numbered factors, ascending: factor, exponent (at least 1), factor, exponent, ... */
+export type Product = readonly number[];
+
+/** A rational function N/D as products of factors. Nothing is cancelled between them. */
 export interface Quotient {
-  readonly top: ReadonlyMap<number, number>;
-  readonly bottom: ReadonlyMap<number, number>;
+  readonly top: Product;
+  readonly bottom: Product;
 }
 
-const EMPTY: ReadonlyMap<number, number> = new Map();
+/** A sum over the least common multiple of its denominators, its numerator not named as a factor. */
+export interface CommonSum {
+  readonly top: Bound;
+  readonly bottom: Product;
+}
+
+const EMPTY: Product = [];
+
+/** log2(2^a1 + 2^a2 + ...), from above, of terms that come one by one; of no terms minus infinity. */
+class SumOfBits {
+  private most = Number.NEGATIVE_INFINITY;
+  private scaled = 0;
+
+  add(bits: number): void {
+    if (bits <= this.most) this.scaled += 2 ** (bits - this.most);
+    else if (bits > Number.NEGATIVE_INFINITY) {
+      this.scaled = this.scaled * 2 ** (this.most - bits) + 1;
+      this.most = bits;
+    }
+  }
+
+  get bits(): number {
+    return Number.isFinite(this.most) ? this.most + Math.log2(this.scaled) + 1e-9 : this.most;
+  }
+}
 
 /** log2(2^a1 + 2^a2 + ...), from above; of an empty list minus infinity. */
 export function sumOfBits(bits: readonly number[]): number {
-  const most = bits.reduce((a, b) => Math.max(a, b), Number.NEGATIVE_INFINITY);
-  if (!Number.isFinite(most)) return most;
-  return most + Math.log2(bits.reduce((sum, b) => sum + 2 ** (b - most), 0)) + 1e-9;
+  const sum = new SumOfBits();
+  for (const b of bits) if (b > Number.NEGATIVE_INFINITY) sum.add(b);
+  return sum.bits;
 }
 
-function merge(
-  a: ReadonlyMap<number, number>,
-  b: ReadonlyMap<number, number>,
-  combine: (x: number, y: number) => number,
-): ReadonlyMap<number, number> {
-  if (b.size === 0) return a;
-  if (a.size === 0) return b;
-  const out = new Map(a);
-  for (const [factor, exponent] of b) out.set(factor, combine(out.get(factor) ?? 0, exponent));
+function times(a: Product, b: Product): Product {
+  if (b.length === 0) return a;
+  if (a.length === 0) return b;
+  const out: number[] = [];
+  let [i, j] = [0, 0];
+  while (i < a.length || j < b.length) {
+    const [x, y] = [a[i] ?? Number.POSITIVE_INFINITY, b[j] ?? Number.POSITIVE_INFINITY];
+    if (x < y) out.push(x, a[i + 1]!);
+    else if (y < x) out.push(y, b[j + 1]!);
+    else out.push(x, a[i + 1]! + b[j + 1]!);
+    if (x <= y) i += 2;
+    if (y <= x) j += 2;
+  }
   return out;
 }
-
-const sum = (x: number, y: number): number => x + y;
 
 /** Numbers the factors of one form: a factor with the same key is the same polynomial up to sign. */
 export class Factors {
@@ -55,16 +84,19 @@ export class Factors {
 
   /** The quotient of products of factors, each list holding a factor as often as it occurs. */
   quotient(top: readonly number[], bottom: readonly number[] = []): Quotient {
-    const count = (factors: readonly number[]): ReadonlyMap<number, number> => {
-      const exponents = new Map<number, number>();
-      for (const factor of factors) exponents.set(factor, (exponents.get(factor) ?? 0) + 1);
-      return exponents;
+    const count = (factors: readonly number[]): Product => {
+      const product: number[] = [];
+      for (const factor of [...factors].sort((a, b) => a - b)) {
+        if (product.at(-2) === factor) product[product.length - 1]! += 1;
+        else product.push(factor, 1);
+      }
+      return product;
     };
     return { top: count(top), bottom: count(bottom) };
   }
 
   multiply(a: Quotient, b: Quotient): Quotient {
-    return { top: merge(a.top, b.top, sum), bottom: merge(a.bottom, b.bottom, sum) };
+    return { top: times(a.top, b.top), bottom: times(a.bottom, b.bottom) };
   }
 
   inverse({ top, bottom }: Quotient): Quotient {
@@ -74,8 +106,7 @@ export class Factors {
   power(a: Quotient, exponent: number): Quotient {
     if (exponent === 0) return this.one();
     const base = exponent < 0 ? this.inverse(a) : a;
-    const raise = (map: ReadonlyMap<number, number>): ReadonlyMap<number, number> =>
-      new Map([...map].map(([factor, e]) => [factor, e * Math.abs(exponent)]));
+    const raise = (product: Product): Product => product.map((x, i) => (i % 2 === 0 ? x : x * Math.abs(exponent)));
     return { top: raise(base.top), bottom: raise(base.bottom) };
   }
 
@@ -84,51 +115,48 @@ export class Factors {
     const [first] = summands;
     if (first === undefined) return this.one();
     if (summands.length === 1) return first;
-    let bottom: ReadonlyMap<number, number> = EMPTY;
-    for (const summand of summands) bottom = this.leastCommonMultiple(bottom, summand.bottom);
-    const whole = this.bound(bottom);
-    const numerators = summands.map((summand) => {
-      const [above, below] = [this.bound(summand.top), this.bound(summand.bottom)];
-      return { degree: above.degree + whole.degree - below.degree, bits: above.bits + whole.bits - below.bits };
-    });
+    const { top, bottom } = this.commonSum(summands);
     const key = summands.map((summand) => this.internKey(summand)).join("+");
-    const numerator = this.factor(`(${key})`, {
-      degree: numerators.reduce((most, { degree }) => Math.max(most, degree), 0),
-      bits: sumOfBits(numerators.map(({ bits }) => bits)),
-    });
-    return { top: new Map([[numerator, 1]]), bottom };
+    return { top: [this.factor(`(${key})`, top), 1], bottom };
+  }
+
+  /** The sum of any number of summands, which are not kept: a form may have hundreds of thousands of terms. */
+  commonSum(summands: Iterable<Quotient>): CommonSum {
+    /** By factor the highest exponent in a denominator. */
+    const exponents: number[] = [];
+    const numerator = new SumOfBits();
+    let degree = Number.NEGATIVE_INFINITY;
+    let count = 0;
+    for (const { top, bottom } of summands) {
+      count += 1;
+      for (let i = 0; i < bottom.length; i += 2) {
+        const factor = bottom[i]!;
+        while (exponents.length <= factor) exponents.push(0);
+        if (bottom[i + 1]! > exponents[factor]!) exponents[factor] = bottom[i + 1]!;
+      }
+      const [above, below] = [this.bound(top), this.bound(bottom)];
+      degree = Math.max(degree, above.degree - below.degree);
+      numerator.add(above.bits - below.bits);
+    }
+    const bottom = exponents.flatMap((exponent, factor) => (exponent === 0 ? [] : [factor, exponent]));
+    if (count === 0) return { top: { degree: 0, bits: 0 }, bottom };
+    const whole = this.bound(bottom);
+    return { top: { degree: Math.max(0, degree + whole.degree), bits: numerator.bits + whole.bits }, bottom };
   }
 
   /** The bound of a product of powers of factors. */
-  bound(product: ReadonlyMap<number, number>): Bound {
+  bound(product: Product): Bound {
     let [degree, bits] = [0, 0];
-    for (const [factor, exponent] of product) {
-      const bound = this.bounds[factor]!;
-      degree += exponent * bound.degree;
-      bits += exponent * bound.bits;
+    for (let i = 0; i < product.length; i += 2) {
+      const bound = this.bounds[product[i]!]!;
+      degree += product[i + 1]! * bound.degree;
+      bits += product[i + 1]! * bound.bits;
     }
     return { degree, bits };
   }
 
-  private leastCommonMultiple(
-    a: ReadonlyMap<number, number>,
-    b: ReadonlyMap<number, number>,
-  ): ReadonlyMap<number, number> {
-    // Grown in place where possible: a sum of many terms must not copy the multiple for each of them.
-    const out = a === EMPTY ? new Map<number, number>() : (a as Map<number, number>);
-    for (const [factor, exponent] of b) {
-      if (exponent > (out.get(factor) ?? 0)) out.set(factor, exponent);
-    }
-    return out;
-  }
-
   /** A short name for a quotient, the same for equal ones. */
   private internKey({ top, bottom }: Quotient): string {
-    const text = (map: ReadonlyMap<number, number>): string =>
-      [...map]
-        .sort(([a], [b]) => a - b)
-        .map(([factor, exponent]) => `${factor}^${exponent}`)
-        .join(" ");
-    return `${this.factor(`:${text(top)}/${text(bottom)}`, { degree: 0, bits: 0 })}`;
+    return `${this.factor(`:${top.join(" ")}/${bottom.join(" ")}`, { degree: 0, bits: 0 })}`;
   }
 }

@@ -23,17 +23,22 @@ export interface FormSize {
 export function sizeBound(form: FormAtN): FormSize {
   const algebra = new SizeAlgebra(form.n);
   const walker = new Walker(algebra, form.formula, form);
-  const terms: Quotient[] = [];
-  for (const term of expandTerms(form.formula, form)) terms.push(walker.value(term.expression, term));
-  const sum = algebra.add(terms);
-  const value = inDualPoints(form.formula) ? algebra.multiply([algebra.dualMeasure(form.loops), sum]) : sum;
-  const [top, bottom] = [algebra.factors.bound(value.top), algebra.factors.bound(value.bottom)];
+  const { factors } = algebra;
+  function* terms(): Generator<Quotient> {
+    for (const term of expandTerms(form.formula, form)) yield walker.value(term.expression, term);
+  }
+  const sum = factors.commonSum(terms());
+  const measure = inDualPoints(form.formula) ? algebra.dualMeasure(form.loops) : factors.one();
+  const [top, bottom] = [
+    factors.bound(measure.top),
+    factors.bound(factors.multiply(measure, { top: [], bottom: sum.bottom }).bottom),
+  ];
   let determinants = 0;
   for (let i = 2; i <= form.k; i++) determinants += 4 * Math.log2(i);
   return {
-    degree: top.degree,
+    degree: top.degree + sum.top.degree,
     denominatorDegree: bottom.degree,
-    heightBits: Math.ceil(top.bits + determinants),
+    heightBits: Math.ceil(top.bits + sum.top.bits + determinants),
     denominatorHeightBits: Math.ceil(bottom.bits),
   };
 }

@@ -37,7 +37,8 @@ const lineBracket = (l: Bound, m: Bound): Bound => terms(6, product(l, m));
 export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
   readonly factors = new Factors();
   private readonly shortKeys = new Map<string, string>();
-  private readonly fiveBrackets = new Map<string, Quotient>();
+  /** R-invariants by their points in ascending order, and their negatives. */
+  private readonly fiveBrackets = new Map<string, readonly [Quotient, Quotient]>();
 
   constructor(private readonly n: number) {}
 
@@ -108,13 +109,43 @@ export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
   }
 
   fiveBracket(points: readonly PointPiece<PointSize>[]): Quotient {
-    const key = keys(points);
-    const known = this.fiveBrackets.get(key);
-    if (known !== undefined) return known;
-    const denominator = points.map((_, i) => this.fourBracket(points.filter((_, j) => j !== i)));
-    const value = this.divide(this.delta(points), this.multiply(denominator));
-    this.fiveBrackets.set(key, value);
-    return value;
+    const ids = points.map(({ id }) => id);
+    let odd = false;
+    // Few enough to sort by insertion, which tells the sign as well.
+    for (let i = 1; i < ids.length; i++) {
+      for (let j = i; j > 0 && ids[j - 1]! > ids[j]!; j--) {
+        [ids[j - 1], ids[j]] = [ids[j]!, ids[j - 1]!];
+        odd = !odd;
+      }
+    }
+    const key = ids.join(" ");
+    let known = this.fiveBrackets.get(key);
+    if (known === undefined) {
+      const even = this.ascendingFive(points, odd);
+      known = [even, this.negate(even)];
+      this.fiveBrackets.set(key, known);
+    }
+    return known[odd ? 1 : 0];
+  }
+
+  /** [a b c d e], minus it where `negative`: delta over five brackets, each of them a polynomial in all points but one. */
+  private ascendingFive(points: readonly PointPiece<PointSize>[], negative: boolean): Quotient {
+    const sorted = points.map(({ value }) => value).sort((p, q) => (p.key < q.key ? -1 : p.key > q.key ? 1 : 0));
+    const denominator = sorted.map((_, i) => {
+      const others = sorted.filter((__, j) => j !== i);
+      const [a, b, c, d] = others as [PointSize, PointSize, PointSize, PointSize];
+      const bound = lineBracket(lineOfPoints(a, b), lineOfPoints(c, d));
+      return this.factors.factor(`four ${others.map(({ key }) => key).join(" ")}`, bound);
+    });
+    const inversions = points.reduce(
+      (sum, { value }, i) => sum + points.slice(i).filter((later) => later.value.key < value.key).length,
+      0,
+    );
+    const value = this.divide(
+      this.delta(sorted.map((size) => ({ slots: 1, id: 0, value: size }))),
+      this.factors.quotient(denominator),
+    );
+    return negative !== (inversions % 2 === 1) ? this.negate(value) : value;
   }
 
   /** Four rows, one a flavour, each of five products <bcde> chi_a; the determinants' own terms are counted in `sizeBound`. */
@@ -251,7 +282,7 @@ export class SizeAlgebra implements Algebra<Quotient, PointSize, LineSize> {
   /** sum of lambda lambdatilde over the product of all the angle brackets that occur. */
   private momentum(legs: readonly number[]): { top: Bound; bottom: number[] } {
     const bottom = [...new Set(legs.flatMap((label) => this.tilde({ kind: "leg", label }).bottom))];
-    const all = this.factors.bound(new Map(bottom.map((factor) => [factor, 1])));
+    const all = this.factors.bound(bottom.flatMap((factor) => [factor, 1]));
     // Each summand lacks the two angle brackets of its own denominator, degree 2 and one bit each.
     const own = { degree: -4, bits: -2 };
     const summand = product(COMPONENT, this.tilde({ kind: "leg", label: 1 }).top, all, own);

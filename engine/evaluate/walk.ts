@@ -9,8 +9,18 @@ import {
   scalarBody,
   symmetricPlaces,
 } from "../notation/expand";
-import { evaluateLabel, evaluateNumber, momentumLegs } from "../notation/indices";
-import type { Definition, DualPoint, Expression, Formula, Item, NamedItem, Operand, SpinorEnd } from "../notation/tree";
+import { evaluateIndex, evaluateLabel, evaluateNumber, momentumLegs } from "../notation/indices";
+import type {
+  Definition,
+  DualPoint,
+  Expression,
+  Formula,
+  IndexExpression,
+  Item,
+  NamedItem,
+  Operand,
+  SpinorEnd,
+} from "../notation/tree";
 import type { Span } from "../result";
 import { type Algebra, type DualSlot, type Piece, type PointPiece, type SpinorSlot, ZeroDenominator } from "./algebra";
 
@@ -28,6 +38,7 @@ export class Walker<V, P, L> {
   private readonly scalars = new Map<string, V>();
   private readonly geometries = new Map<string, readonly Piece<P, L>[]>();
   private readonly pieces = new Map<string, Piece<P, L>>();
+  private readonly legs: (PointPiece<P> | undefined)[] = [];
 
   constructor(
     private readonly algebra: Algebra<V, P, L>,
@@ -161,10 +172,11 @@ export class Walker<V, P, L> {
   }
 
   private call(expression: Extract<Expression, { kind: "call" }>, place: Place): V {
-    const at = definitionPlace(this.definition(expression.name), expression.arguments, place, this.extent.n);
-    return remember(this.scalars, placeKey(expression.name, at), () =>
-      this.value(scalarBody(this.definitions, expression.name), at),
-    );
+    const { name } = expression;
+    return remember(this.scalars, keyOfUse(name, expression.arguments, place), () => {
+      const at = definitionPlace(this.definition(name), expression.arguments, place, this.extent.n);
+      return this.value(scalarBody(this.definitions, name), at);
+    });
   }
 
   private definition(name: string): Definition {
@@ -178,7 +190,10 @@ export class Walker<V, P, L> {
   }
 
   private items(items: readonly Item[], place: Place): readonly Piece<P, L>[] {
-    return items.length === 1 ? this.item(items[0]!, place) : items.flatMap((item) => this.item(item, place));
+    if (items.length === 1) return this.item(items[0]!, place);
+    const pieces: Piece<P, L>[] = [];
+    for (const item of items) pieces.push(...this.item(item, place));
+    return pieces;
   }
 
   private points(items: readonly Item[], place: Place): readonly PointPiece<P>[] {
@@ -213,7 +228,12 @@ export class Walker<V, P, L> {
   }
 
   private external(label: number): PointPiece<P> {
-    return this.point(`Z${label}`, () => this.algebra.externalPoint(label));
+    let leg = this.legs[label];
+    if (leg === undefined) {
+      leg = this.point(`Z${label}`, () => this.algebra.externalPoint(label));
+      this.legs[label] = leg;
+    }
+    return leg;
   }
 
   private loopPoint(loop: number, which: 0 | 1): PointPiece<P> {
@@ -250,18 +270,21 @@ export class Walker<V, P, L> {
   }
 
   private named(item: NamedItem, place: Place): readonly Piece<P, L>[] {
-    const definition = this.definition(item.name);
-    const { value } = definition;
-    if (value.kind !== "geometry") throw new Error(`named: expected ${item.name} to be a point, line or plane`);
-    const at = definitionPlace(definition, item.arguments, place, this.extent.n);
-    return remember(this.geometries, placeKey(item.name, at), () =>
-      value.geometry.kind === "meet" ? this.item(value.geometry, at) : this.items(value.geometry.items, at),
-    );
+    return remember(this.geometries, keyOfUse(item.name, item.arguments, place), () => {
+      const definition = this.definition(item.name);
+      const { value } = definition;
+      if (value.kind !== "geometry") throw new Error(`named: expected ${item.name} to be a point, line or plane`);
+      const at = definitionPlace(definition, item.arguments, place, this.extent.n);
+      return value.geometry.kind === "meet" ? this.item(value.geometry, at) : this.items(value.geometry.items, at);
+    });
   }
 }
 
-const placeKey = (name: string, { bindings, shift, permutation }: Place): string =>
-  `${name}|${[...bindings.values()].join()}|${shift}|${permutation.join("")}`;
+/** One key for each list of arguments and each place that `cyc` and `sym` move a definition to. */
+function keyOfUse(name: string, values: readonly IndexExpression[], { bindings, shift, permutation }: Place): string {
+  if (values.length === 0 && shift === 0 && permutation.length < 2) return name;
+  return `${name}|${values.map((value) => evaluateIndex(value, bindings)).join()}|${shift}|${permutation.join("")}`;
+}
 
 function remember<X>(known: Map<string, X>, key: string, make: () => X): X {
   const old = known.get(key);

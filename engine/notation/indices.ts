@@ -29,6 +29,12 @@ export function reduceLabel(value: bigint, n: number): number {
 
 /** The label 1..n of an index expression, moved on by `shift` legs (what `cyc` does, after the expression has its value). */
 export function evaluateLabel(expression: IndexExpression, bindings: Bindings, n: number, shift = 0): number {
+  const { terms, constant } = expression;
+  if (terms.length === 0 && constant.length < 10) {
+    // Most labels are written as numbers: no big integers for those.
+    const residue = (Number(constant) + shift) % n;
+    return residue <= 0 ? residue + n : residue;
+  }
   return reduceLabel(evaluateIndex(expression, bindings) + BigInt(shift), n);
 }
 

@@ -133,8 +133,11 @@ describe("five gluons at 1,000 points of phase space", () => {
       if (found.kind !== "value") throw new Error(found.kind);
       const closed = invariant(momenta, 1, 2) ** 4 / cycle(momenta, [1, 2, 3, 4, 5]);
       const relative = Math.abs(magnitude(found.value) ** 2 / closed - 1);
-      expect(relative).toBeLessThan(1e-12);
-      expect(relative).toBeLessThan(3 * 10 ** -found.digits);
+      // Where two neighbours are nearly parallel their invariant, a small difference of products of doubles, has lost digits itself.
+      const smallest = Math.min(...[1, 2, 3, 4, 5].map((i) => Math.abs(invariant(momenta, i, (i % 5) + 1))));
+      const lost = (1e-15 * invariant(momenta, 1, 2)) / smallest;
+      expect(relative).toBeLessThan(Math.max(1e-12, lost));
+      expect(relative).toBeLessThan(Math.max(3 * 10 ** -found.digits, lost));
     }
   });
 
