@@ -9,6 +9,7 @@ import { otherTarget } from "./otherTarget";
 import { referenceDependent } from "./referenceDependent";
 import { relabelled } from "./relabelled";
 import { singleTerm } from "./singleTerm";
+import { spuriousPole } from "./spuriousPole";
 import { weight } from "./weight";
 
 export { type DiagnosisCase, drawProbes } from "./case";
@@ -29,6 +30,7 @@ const diagnoses: readonly DiagnosisCheck[] = [
   { run: singleTerm, final: false },
   { run: referenceDependent, final: false },
   { run: relabelled, final: true },
+  { run: spuriousPole, final: false },
 ];
 
 export function diagnose(c: DiagnosisCase): readonly Diagnosis[] {
