@@ -77,6 +77,12 @@ describe("the check refuses", () => {
       entry("sum(i, j : 1 <= i, i+1 < j < n) [* i i+1 j j+1]", 6, 1),
       { code: "reference-dependent" },
     ],
+    // 1008.2958: each spurious pole of the three-term form stands in two terms, so that one term alone cannot cancel it.
+    [
+      "a missing term",
+      entry("[1 2 3 4 5] + [1 2 3 5 6]", 6, 1),
+      { code: "spurious-pole", brackets: ["<1 3 4 5>", "<1 3 5 6>"], terms: [0, 1] },
+    ],
     [
       "a rotated component",
       entry("<2 3>^4 / (<1 2><2 3><3 4><4 5><5 1>)", 5, 0, 0, { component: "--+++" }),
