@@ -1,6 +1,7 @@
 /** What a denominator vanishes with. */
 import type { Place } from "../notation/expand";
 import type { Expression } from "../notation/tree";
+import type { Point } from "./brackets";
 
 export type SpinorKind = "angle" | "square";
 
@@ -9,8 +10,10 @@ export interface Divisor {
   readonly text: string;
   readonly physical: boolean;
   readonly reference: boolean;
-  /** Brackets that divide the one in the text: the divisor is what is left of it. */
-  readonly without: readonly { readonly text: string; readonly power: number }[];
+  /** The four points of a four-bracket, null for anything else. */
+  readonly points: readonly Point[] | null;
+  /** Brackets that divide the one of `points`: the divisor is what is left of it. */
+  readonly without: readonly { readonly points: readonly Point[]; readonly power: number }[];
   /** Set for a denominator that is a sum: the expression itself and where it stands. */
   readonly written: { readonly expression: Expression; readonly place: Place } | null;
 }

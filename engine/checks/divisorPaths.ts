@@ -13,8 +13,8 @@ import type { Field } from "../fields";
 import type { PrimeSeries, PrimeSeriesField } from "../fields/primeSeries";
 import { type LegSpinors, type Point, spinorBracket, type Twistor, twistorsOfSpinors } from "../kinematics";
 import { parse } from "../notation/parse";
-import type { Formula } from "../notation/tree";
 import type { Divisor } from "./divisor";
+import { bracketOf } from "./factoring";
 import type { Ground } from "./ground";
 import { firstRoot, interpolate } from "./roots";
 
@@ -62,43 +62,38 @@ export function pathThrough(form: FormAtN, divisor: Divisor, ground: Ground): Pa
   return null;
 }
 
-/** The divisor as a function of the point; null at a bad point. A bracket is read from its text, which is in the notation. */
+/** The divisor as a function of the point; null at a bad point. */
 function equationOf(
   form: FormAtN,
-  divisor: Divisor,
+  { text, points, without, written }: Divisor,
 ): ((field: Field<number>, point: Point<number>) => number | null) | null {
-  if (divisor.written !== null) {
-    const { expression, place } = divisor.written;
+  if (written !== null)
     return (field, point) => {
       const algebra = new NumericAlgebra(field, point, form.squareSign);
       try {
-        return algebra.values.number(new Walker(algebra, form.formula, form).value(expression, place));
+        return algebra.values.number(new Walker(algebra, form.formula, form).value(written.expression, written.place));
       } catch (reason) {
         if (reason instanceof ZeroDenominator) return null;
         throw reason;
       }
     };
-  }
-  const texts = [{ text: divisor.text, power: 1 }, ...divisor.without];
-  const formulas: { formula: Formula; power: number }[] = [];
-  for (const { text, power } of texts) {
-    const parsed = parse(text);
-    if (!parsed.ok) return null;
-    formulas.push({ formula: parsed.value, power });
-  }
+  if (points !== null)
+    return (field, point) => {
+      let value = bracketOf(field, points, point);
+      for (const other of without) {
+        const inverse = field.inverse(bracketOf(field, other.points, point));
+        if (inverse === null) return null;
+        for (let i = 0; i < other.power; i++) value = field.multiply(value, inverse);
+      }
+      return value;
+    };
+  // Brackets of spinors are read from their text, which is in the notation.
+  const parsed = parse(text);
+  if (!parsed.ok) return null;
+  const formula = parsed.value;
   return (field, point) => {
-    const values = formulas.map(({ formula, power }) => {
-      const found = evaluateForm(field, { ...form, formula }, point);
-      return found.kind === "value" ? { value: found.sum, power } : null;
-    });
-    const [whole, ...others] = values;
-    let result = whole?.value ?? null;
-    for (const other of others) {
-      const inverse = other === null ? null : field.inverse(other.value);
-      if (inverse === null || other === null) return null;
-      for (let i = 0; i < other.power && result !== null; i++) result = field.multiply(result, inverse);
-    }
-    return result;
+    const found = evaluateForm(field, { ...form, formula }, point);
+    return found.kind === "value" ? found.sum : null;
   };
 }
 

@@ -6,6 +6,7 @@
 import { type Field, randomness, smallPrimeField } from "../fields";
 import { type PrimeSeries, primeSeries, valuationOf } from "../fields/primeSeries";
 import {
+  type Point as KinematicPoint,
   type Line,
   lineBracket,
   lineThrough,
@@ -57,11 +58,13 @@ export function factorsOf(points: readonly Point[]): readonly Factor[] {
     const inPlane = [0, 1, 2, 3].map((i) =>
       [a, b, c].reduce((sum, name, j) => field.add(sum, field.multiply(mixing[j]!, at(name)[i]!)), 0),
     );
-    const value = bracketAt(field, points, (name) => (name === d ? inPlane : at(name)));
+    const value = bracketAt(field, points, (atom) => (pointText(atom) === d ? inPlane : at(pointText(atom))));
     if (value !== 0) continue;
     const series = primeSeries(field, seriesTerms);
     const moving = inPlane.map((x, i) => series.linear(x, direction[i]!));
-    const power = valuationOf(bracketAt<PrimeSeries>(series, points, (name) => (name === d ? moving : at(name))));
+    const power = valuationOf(
+      bracketAt<PrimeSeries>(series, points, (atom) => (pointText(atom) === d ? moving : at(pointText(atom)))),
+    );
     // A bracket that vanishes everywhere has every factor: it is left whole, and its zero is found where it is evaluated.
     if (power === null || !Number.isFinite(power)) return [{ points, power: 1, without: [] }];
     factors.push({ points: four.map((name) => atoms.get(name)!), power, without: [] });
@@ -86,8 +89,25 @@ function atomsOf(p: Point): readonly Point[] {
   return [p];
 }
 
+/** The bracket at a kinematic point. */
+export const bracketOf = <T>(ring: Field<T>, points: readonly Point[], point: KinematicPoint<T>): T =>
+  bracketAt(ring, points, (atom) => {
+    switch (atom.kind) {
+      case "label":
+        return point.twistors[atom.label - 1]!;
+      case "letter":
+        return point.lines[atom.line]![atom.which];
+      case "star":
+        return point.referenceTwistor;
+      case "reference":
+        return point.referenceLine[atom.which];
+      default:
+        throw new Error(`bracketOf: expected a point that is given, got ${atom.text}`);
+    }
+  });
+
 /** <a b c d> with every atom (leg, loop point, reference) where `at` puts it. */
-function bracketAt<T>(ring: Field<T>, points: readonly Point[], at: (name: string) => Twistor<T>): T {
+function bracketAt<T>(ring: Field<T>, points: readonly Point[], at: (atom: Point) => Twistor<T>): T {
   const pairs = pairsOf(points);
   const lines = pairs.map((pair) => lineOf(ring, pair, at));
   return lineBracket(ring, lines[0]!, lines[1]!);
@@ -106,14 +126,14 @@ const partners = (formal: readonly Point[], p: Point): readonly Point[] => [
   ...formal.filter((q) => q.kind === "planes" && p.kind === "planes" && q.which === 1 && q.text === p.text).slice(0, 1),
 ];
 
-function lineOf<T>(ring: Field<T>, pair: readonly Point[], at: (name: string) => Twistor<T>): Line<T> {
+function lineOf<T>(ring: Field<T>, pair: readonly Point[], at: (atom: Point) => Twistor<T>): Line<T> {
   const [p, q] = pair;
   if (p?.kind === "planes")
     return meetOfPlanes(ring, planeOfPoints(ring, p.left, at), planeOfPoints(ring, p.right, at));
   return lineThrough(ring, twistorOf(ring, p!, at), twistorOf(ring, q!, at));
 }
 
-function planeOfPoints<T>(ring: Field<T>, points: readonly Point[], at: (name: string) => Twistor<T>): Plane<T> {
+function planeOfPoints<T>(ring: Field<T>, points: readonly Point[], at: (atom: Point) => Twistor<T>): Plane<T> {
   const formal = points.filter((p) => p.kind === "planes");
   if (formal.length > 0) {
     const other = points.find((p) => p.kind !== "planes");
@@ -123,7 +143,7 @@ function planeOfPoints<T>(ring: Field<T>, points: readonly Point[], at: (name: s
   return planeThrough(ring, a!, b!, c!);
 }
 
-function twistorOf<T>(ring: Field<T>, p: Point, at: (name: string) => Twistor<T>): Twistor<T> {
-  if (p.kind !== "meet") return at(pointText(p));
+function twistorOf<T>(ring: Field<T>, p: Point, at: (atom: Point) => Twistor<T>): Twistor<T> {
+  if (p.kind !== "meet") return at(p);
   return meetOfLineAndPlane(ring, lineOf(ring, p.line, at), planeOfPoints(ring, p.plane, at));
 }

@@ -221,7 +221,8 @@ class PoleFinder {
           this.#note(text, {
             physical: isPhysicalFour(factor, this.form.n),
             reference: holdsReference(factor),
-            without: without.map((other) => ({ text: `<${itemsText(other.points)}>`, power: other.power })),
+            points: factor,
+            without,
           });
           total.set(text, (total.get(text) ?? 0) + power * order);
         }
@@ -308,6 +309,7 @@ class PoleFinder {
       text: key,
       physical: false,
       reference: key.includes("*"),
+      points: null,
       without: [],
       written: null,
       ...known,
