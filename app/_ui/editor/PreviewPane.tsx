@@ -8,7 +8,7 @@ import type { PreviewState } from "./usePreview";
 
 /** The formula as a paper prints it, while it is typed. */
 export const PreviewPane = memo(function PreviewPane({ state }: { state: PreviewState }) {
-  const { preview, tooSlow } = state;
+  const { preview, verdict, tooSlow } = state;
   return (
     <section className={styles.preview} aria-labelledby="preview-head">
       <h3 id="preview-head">As a paper prints it</h3>
@@ -37,6 +37,11 @@ export const PreviewPane = memo(function PreviewPane({ state }: { state: Preview
             {numbered(preview.terms, "term")} at n = {preview.at}
             {preview.allLines > preview.lines.length &&
               `; ${preview.allLines - preview.lines.length} more lines not shown`}
+          </p>
+          <p className={styles.verdict} aria-live="polite" data-state={verdict?.state}>
+            {verdict === null
+              ? "Looking at a few random points …"
+              : `${verdict.message} ${verdict.state === "undecided" ? "" : "Found in this browser; submitting checks it."}`}
           </p>
         </>
       ) : (

@@ -4,6 +4,7 @@ import { useEffect, useRef, useState } from "react";
 import type { Fields } from "./entryFields";
 import type { Preview } from "./preview";
 import type { PreviewReply, PreviewRequest } from "./preview.worker";
+import type { Verdict } from "./verdict";
 
 /** A pause in typing after which the formula is read, and the time after which a reading is given up. */
 const PAUSE = 200;
@@ -11,6 +12,8 @@ const PATIENCE = 8000;
 
 export interface PreviewState {
   readonly preview: Preview;
+  /** What the engine in this browser says of it; null while it is at work, and where there is nothing to say. */
+  readonly verdict: Verdict | null;
   /** The formula the preview is of: spans count in it. */
   readonly notation: string;
   /** Set when the last reading was given up. */
@@ -19,7 +22,12 @@ export interface PreviewState {
 
 /** The preview of the fields, read in a worker after each pause; a reading that takes too long is stopped, not waited for. */
 export function usePreview(fields: Fields): PreviewState {
-  const [state, setState] = useState<PreviewState>({ preview: { kind: "empty" }, notation: "", tooSlow: false });
+  const [state, setState] = useState<PreviewState>({
+    preview: { kind: "empty" },
+    verdict: null,
+    notation: "",
+    tooSlow: false,
+  });
   const worker = useRef<Worker | null>(null);
   const last = useRef(0);
 
@@ -38,9 +46,14 @@ export function usePreview(fields: Fields): PreviewState {
       const reader = worker.current;
       const request: PreviewRequest = { id: ++last.current, fields };
       reader.onmessage = (event: MessageEvent<PreviewReply>) => {
-        if (event.data.id !== last.current) return;
+        const reply = event.data;
+        if (reply.id !== last.current) return;
+        if (reply.kind === "preview") {
+          setState({ preview: reply.preview, verdict: null, notation: fields.notation, tooSlow: false });
+          return;
+        }
         clearTimeout(patience);
-        setState({ preview: event.data.preview, notation: fields.notation, tooSlow: false });
+        setState((before) => ({ ...before, verdict: reply.verdict }));
       };
       patience = setTimeout(() => {
         reader.terminate();
