@@ -42,13 +42,13 @@ export default function Reference() {
         </p>
       </Section>
       <Section id="items" head="Items">
-        <Rules rows={items} label="Items of a bracket" what="Item" />
+        <Rules rows={items} label="Table of items" what="Item" />
       </Section>
       <Section id="brackets" head="Brackets">
-        <Rules rows={brackets} label="Brackets" what="Bracket" />
+        <Rules rows={brackets} label="Table of brackets" what="Bracket" />
       </Section>
       <Section id="expressions" head="Expressions">
-        <Rules rows={expressions} label="Expressions" what="Written" />
+        <Rules rows={expressions} label="Table of expressions" what="Written" />
       </Section>
       <Section id="conventions" head="Conventions">
         <p>

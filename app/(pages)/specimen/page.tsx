@@ -39,7 +39,7 @@ export default function Specimen() {
         <Marks marks={accepted.marks} />
       </Section>
       <Section id="poles" head="Poles">
-        <Poles poles={accepted.poles} label="Poles" />
+        <Poles poles={accepted.poles} label="A few poles" />
         <Poles poles={manyPoles} label="Many poles" />
       </Section>
       <Section id="faults" head="Faults">
