@@ -18,7 +18,7 @@ const WORD = 2 ** 32;
 export function randomness(seed: string): Randomness {
   const encoder = new TextEncoder();
   let counter = 0;
-  let block = new DataView(new ArrayBuffer(0));
+  let block: DataView = new DataView(new ArrayBuffer(0));
   let at = 0;
   const word = (): number => {
     if (at === block.byteLength) {
