@@ -245,7 +245,8 @@ function summary(
     return "Undecided: every comparison would take more operations than the budget of this check.";
   if (reason === "bound")
     return "Undecided: the expressions are so large that no number of points modulo 31-bit primes gives the bound asked for.";
-  return "Undecided: there is no source of truth and no accepted form to compare with, and no constraint fails.";
+  const fixed = results.every((r) => r.marks.twoParticleCuts?.state === "holds");
+  return `Undecided: there is no source of truth and no accepted form to compare with, and no constraint fails.${fixed ? " The form is fixed by its two-particle cuts, all of which hold." : ""}`;
 }
 
 function list(names: readonly string[]): string {

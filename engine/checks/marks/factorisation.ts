@@ -3,12 +3,22 @@
  * shared; j = i+2 is the collinear limit that lowers k (1008.2958; MARKS "Factorisation").
  */
 import { type PrimeSeries, type PrimeSeriesField, precisionOf, valuationOf } from "../../fields/primeSeries";
-import { bracket, combineChi, wrapLabel } from "../../kinematics";
+import { bracket, combineChi, lineThrough, meetOfLineAndPlane, planeThrough, wrapLabel } from "../../kinematics";
 import { PlanBuilder, type Term } from "../../sources/plan";
 import type { Bench } from "../bench";
 import { type Ground, mostAttempts } from "../ground";
 import type { Mark } from "../report";
-import { keyOf, markBudget, notApplicable, onlyAmplitudes, overBudget, primeText, untested } from "./lower";
+import { firstUnknown, sumOverSplittings } from "./distributions";
+import {
+  keyOf,
+  markBudget,
+  missingSource,
+  notApplicable,
+  onlyAmplitudes,
+  overBudget,
+  primeText,
+  untested,
+} from "./lower";
 import { combine, directionOf, type Leg, legOf, moved, withLeg } from "./moves";
 import { buildProduct, type Side, sideExists, sideTerms, sumOfProducts } from "./products";
 
@@ -19,10 +29,18 @@ export function factorisation(bench: Bench): Mark {
   const other = onlyAmplitudes(bench);
   if (other !== null) return other;
   if (k === 0) return notApplicable("An amplitude with k = 0 has no multi-particle pole, its MHV factor left aside.");
-  if (loops > 1)
+  if (loops > 1 && k > 1)
     return untested(`No source of truth knows products of amplitudes with k >= 1 and ${loops} loops between them.`);
   const channels = channelsOf(n);
-  const costly = overBudget(bench, channels.length) ?? termsOverBudget(bench, channels);
+  const missing =
+    k > 1
+      ? null
+      : firstUnknown(
+          channels.map(([i, j]) => [j - i + 1, n - (j - i) + 1] as const),
+          loops,
+        );
+  if (missing !== null) return missingSource(missing);
+  const costly = overBudget(bench, channels.length) ?? (k > 1 ? termsOverBudget(bench, channels) : null);
   if (costly !== null) return costly;
   const primes = new Set<number>();
   for (const channel of channels) {
@@ -43,7 +61,7 @@ export function factorisation(bench: Bench): Mark {
   const lowering = channels.filter(([i, j]) => isLowering(n, i, j)).length;
   return {
     state: "holds",
-    evidence: `On all ${channels.length} poles <i i+1 j j+1> (${lowering} of them the collinear limits that lower k) the residue is the sum of products of smaller amplitudes by the recursions of the sources, at one point each, modulo ${primeText(primes)}.`,
+    evidence: `On all ${channels.length} poles <i i+1 j j+1> (${lowering} of them the collinear limits that lower k) the residue is the sum of products of smaller amplitudes of the sources, at one point each, modulo ${primeText(primes)}.`,
   };
 }
 
@@ -140,27 +158,62 @@ function productOnPole(bench: Bench, [i, j]: Channel, ground: Ground, end: Leg<n
   const { field, point } = ground;
   const label = wrapLabel(n, j + 1);
   const star: Leg<number> = { z: point.referenceTwistor, chi: point.referenceChi };
-  const builder = new PlanBuilder(n + 1 + 2 * point.loops);
-  const inner = builder.meet([i - 1, i % n], [j - 1, label - 1, n]);
-  const terms: Term[] = [];
-  for (const [one, other] of sidesOf(bench, [i, j], inner)) terms.push(...buildProduct(builder, one, other));
-  const noChi = [0, 1, 2, 3].map(() => new Array<number>(k).fill(0));
-  const base: Leg<number>[] = [
-    ...Array.from({ length: n }, (_, leg) => (leg + 1 === label ? end : legOf(point, leg + 1))),
-    star,
-    ...(point.lines[0] ?? []).map((z) => ({ z, chi: noChi })),
-  ];
   const five = [legOf(point, i), legOf(point, i + 1), legOf(point, j), end, star];
   const four = five.map((_, at) => {
     const [p, q, r, s] = [1, 2, 3, 4].map((step) => five[(at + step) % 5]!.z);
     return bracket(field, p!, q!, r!, s!);
   });
+  // The bracket that vanishes belongs to the last point, and is the one that the limit takes away.
+  const inverse = field.inverse(four.slice(0, 4).reduce(field.multiply, 1));
   const rows = combineChi(
     field,
     five.map(({ chi }, at) => [four[at]!, chi] as const),
   );
-  // The bracket that vanishes belongs to the last point, and is the one that the limit takes away.
-  const inverse = field.inverse(four.slice(0, 4).reduce(field.multiply, 1));
-  const sum = sumOfProducts(ground.prime, builder.finish(terms), base, k, rows);
-  return inverse === null || sum === null ? null : field.multiply(inverse, sum);
+  if (inverse === null || rows === null) return null;
+  const legs = Array.from({ length: n }, (_, leg) => (leg + 1 === label ? end : legOf(point, leg + 1)));
+  const sum = k === 1 ? productsOfMhv(ground, legs, [i, j], rows) : productsOfPlans(bench, ground, legs, [i, j], rows);
+  return sum === null ? null : field.multiply(inverse, sum);
+}
+
+/** For k = 1 both sides have k = 0: the determinants are the row itself, and the sides are numbers at any number of loops. */
+function productsOfMhv(
+  ground: Ground,
+  legs: readonly Leg<number>[],
+  [i, j]: Channel,
+  rows: readonly (readonly number[])[],
+): number | null {
+  const { field, point } = ground;
+  const n = legs.length;
+  const at = (label: number): Leg<number> => legs[(label - 1) % n]!;
+  const line = lineThrough(field, at(i).z, at(i + 1).z);
+  const plane = planeThrough(field, at(j).z, at(j + 1).z, point.referenceTwistor);
+  const inner: Leg<number> = { z: meetOfLineAndPlane(field, line, plane), chi: [] };
+  const range = (from: number, count: number) => Array.from({ length: count }, (_, step) => at(from + step));
+  const sides = [
+    [...range(i + 1, j - i), inner],
+    [inner, ...range(j + 1, n - (j - i))],
+  ] as const;
+  const sum = sumOverSplittings(ground, sides, point.lines);
+  return sum === null ? null : rows.reduce((product, row) => field.multiply(product, row[0]!), sum);
+}
+
+function productsOfPlans(
+  bench: Bench,
+  { point, prime }: Ground,
+  legs: readonly Leg<number>[],
+  [i, j]: Channel,
+  rows: readonly (readonly number[])[],
+): number | null {
+  const { n, k } = bench.form;
+  const builder = new PlanBuilder(n + 1 + 2 * point.loops);
+  const inner = builder.meet([i - 1, i % n], [j - 1, j % n, n]);
+  const terms: Term[] = [];
+  for (const [one, other] of sidesOf(bench, [i, j], inner)) terms.push(...buildProduct(builder, one, other));
+  const noChi = [0, 1, 2, 3].map(() => new Array<number>(k).fill(0));
+  const base: Leg<number>[] = [
+    ...legs,
+    { z: point.referenceTwistor, chi: point.referenceChi },
+    ...(point.lines[0] ?? []).map((z) => ({ z, chi: noChi })),
+  ];
+  return sumOfProducts(prime, builder.finish(terms), base, k, rows);
 }
