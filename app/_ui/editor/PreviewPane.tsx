@@ -38,7 +38,12 @@ export const PreviewPane = memo(function PreviewPane({ state }: { state: Preview
             {preview.allLines > preview.lines.length &&
               `; ${preview.allLines - preview.lines.length} more lines not shown`}
           </p>
-          <p className={styles.verdict} aria-live="polite" data-state={verdict?.state}>
+          <p
+            className={styles.verdict}
+            aria-live="polite"
+            data-state={verdict?.state}
+            data-milliseconds={verdict?.milliseconds.toFixed(1)}
+          >
             {verdict === null
               ? "Looking at a few random points …"
               : `${verdict.message} ${verdict.state === "undecided" ? "" : "Found in this browser; submitting checks it."}`}
