@@ -92,7 +92,7 @@ function playwrightCounts() {
 checkNode();
 install();
 installTools();
-await prepareCode(["equiform", "worker", "check-thread", "seed"]);
+await prepareCode(["equiform", "worker", "check-thread", "compute-thread", "seed"]);
 rmSync(results, { recursive: true, force: true });
 mkdirSync(results, { recursive: true });
 const modules = (path) => join("node_modules", path);

@@ -5,3 +5,4 @@ export * from "./forms";
 export * from "./identifiers";
 export * from "./library";
 export * from "./problem";
+export * from "./values";

@@ -17,8 +17,12 @@ export const problemCodes = {
   "too-large": { status: 413, title: "The body is too large" },
   "unsupported-media-type": { status: 415, title: "The body must be JSON" },
   "unreadable-entry": { status: 422, title: "The entry document cannot be read" },
+  "cannot-derive": { status: 422, title: "The form cannot be derived" },
+  "cannot-evaluate": { status: 422, title: "There are no values" },
+  "too-costly": { status: 422, title: "The computation is too large for the server" },
   "idempotency-key-reused": { status: 422, title: "The idempotency key was used with another body" },
   "foreign-host": { status: 421, title: "The server does not answer to this host name" },
+  busy: { status: 503, title: "The server is busy" },
   internal: { status: 500, title: "The server failed" },
 } as const;
 

@@ -1,4 +1,4 @@
 /** Forms: submitted, read, listed. */
 export { listForms } from "./list";
-export { getCertificate, getForm } from "./read";
+export { getCertificate, getEntry, getForm } from "./read";
 export { submitForm } from "./submit";

@@ -99,3 +99,9 @@ export async function getCertificate(principal: Principal, name: string): Promis
   const check = await read().check.findUnique({ where: { id: row.checkId }, select: { certificate: true } });
   return check?.certificate ?? null;
 }
+
+/** The entry document of a version that the caller may read, or null. */
+export async function getEntry(principal: Principal, name: string): Promise<unknown> {
+  const row = await findVersion(principal, name);
+  return row && mayRead(principal, row.form, row.state) ? (JSON.parse(row.source) as unknown) : null;
+}

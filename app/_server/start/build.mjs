@@ -2,5 +2,5 @@
 import { buildPages, prepareCode } from "./prepare.mjs";
 
 process.env.NODE_ENV = "production";
-await prepareCode(["equiform", "worker", "check-thread", "seed"]);
+await prepareCode(["equiform", "worker", "check-thread", "compute-thread", "seed"]);
 buildPages();

@@ -10,6 +10,7 @@ export const programs = {
   equiform: { entry: "app/_server/cli/main.ts", sources: ["engine", "app/_server/cli"] },
   worker: { entry: "app/_server/checks/worker.ts", sources: server },
   "check-thread": { entry: "app/_server/checks/thread.ts", sources: ["engine", "app/_server/checks"] },
+  "compute-thread": { entry: "app/_server/compute/thread.ts", sources: ["engine", "app/_server/compute"] },
   env: { entry: "app/_server/env.ts", sources: ["app/_server/env.ts"] },
   bench: { entry: "app/_server/bench/main.ts", sources: ["engine", "app/_server/bench"] },
   seed: { entry: "prisma/seed.ts", sources: server },

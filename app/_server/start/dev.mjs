@@ -2,7 +2,7 @@
 import { migrate, prepareCode, settings } from "./prepare.mjs";
 import { run } from "./run.mjs";
 
-await prepareCode(["worker", "check-thread", "seed"]);
+await prepareCode(["worker", "check-thread", "compute-thread", "seed"]);
 const environment = await settings();
 await migrate(environment.databaseUrl);
 await run("dev", environment);
