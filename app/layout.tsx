@@ -1,4 +1,4 @@
-/** The frame of every page: skip link, the name and the three places, the page, and what this server is. */
+/** The frame of every page: skip link, the name and the places, the page, and what this server is. */
 import type { Metadata, Viewport } from "next";
 import localFont from "next/font/local";
 import type { ReactNode } from "react";

@@ -16,6 +16,12 @@ export function PageHead() {
             <a href="/submit">Submit a form</a>
           </li>
           <li>
+            <a href="/derive">Derive</a>
+          </li>
+          <li>
+            <a href="/evaluate">Evaluate</a>
+          </li>
+          <li>
             <a href="/reference">Notation</a>
           </li>
         </ul>

@@ -44,6 +44,9 @@ export function FormArticle({ form, bibtex, from }: { form: FormView; bibtex: st
       <Section id="formula" head="Formula">
         <Formula lines={lines} first={from} label={`Formula of ${form.version}`} />
         <FormulaPages id={form.version} lines={form.latex.length} from={from} step={LINES} />
+        <p>
+          <a href={`/evaluate?form=${form.version}&random=4`}>Evaluate this form</a> at points
+        </p>
         <details>
           <summary>In the notation</summary>
           <SourceText text={form.notation} label={`Notation of ${form.version}`} copy="the notation" />

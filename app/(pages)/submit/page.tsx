@@ -1,16 +1,18 @@
 import { randomUUID } from "node:crypto";
 import type { Metadata } from "next";
 import { headers } from "next/headers";
+import { deriveForm } from "../../_server/derive";
 import { getForm } from "../../_server/forms";
 import { localUser } from "../../_server/principal";
-import { exampleFields, fieldNames, fieldsOf, readFields } from "../../_ui/editor/entryFields";
+import { deriveRequestOf, readDeriveFields } from "../../_ui/derive/deriveQuery";
+import { exampleFields, fieldNames, fieldsOf, fieldsOfDocument, readFields } from "../../_ui/editor/entryFields";
 import { SubmitForm } from "../../_ui/editor/SubmitForm";
 import { Lead, Opening, Page, Section } from "../../_ui/Page";
 import { submitFields } from "./actions";
 
 export const metadata: Metadata = { title: "Submit a form" };
 
-/** The editor. An address with fields or a kept form in its query opens it with these; otherwise it opens with the example or the kept draft. */
+/** The editor. An address with fields, a kept form or a derived one in its query opens it with these; otherwise it opens with the example or the kept draft. */
 export default async function SubmitPage({
   searchParams,
 }: {
@@ -19,8 +21,17 @@ export default async function SubmitPage({
   const query = await searchParams;
   const kept = typeof query.form === "string" ? await getForm(localUser, query.form) : null;
   const form = kept?.kind === "form" ? kept : null;
+  const derived =
+    typeof query.derived === "string" ? await deriveForm(localUser, deriveRequestOf(readDeriveFields(query))) : null;
   const asked = form !== null || fieldNames.some((name) => typeof query[name] === "string");
-  const initial = form !== null ? fieldsOf(form) : asked ? readFields((name) => query[name]) : exampleFields;
+  const initial =
+    form !== null
+      ? fieldsOf(form)
+      : derived?.ok
+        ? fieldsOfDocument(derived.value.document)
+        : asked
+          ? readFields((name) => query[name])
+          : exampleFields;
   const nonce = (await headers()).get("x-nonce");
   return (
     <Page>

@@ -51,6 +51,27 @@ export function readFields(get: (name: FieldName) => unknown): Fields {
   return fields;
 }
 
+/** The fields that make a derived form. */
+export function fieldsOfDocument(document: {
+  readonly amplitude: { readonly n: number; readonly k: number; readonly loops: number };
+  readonly title: string;
+  readonly notation: string;
+  readonly method: string;
+  readonly references: readonly { readonly arxiv: string }[];
+}): Fields {
+  const { amplitude, title, notation, method, references } = document;
+  return {
+    ...emptyFields,
+    n: String(amplitude.n),
+    k: String(amplitude.k),
+    loops: String(amplitude.loops),
+    notation,
+    title,
+    method,
+    references: references.map(({ arxiv }) => arxiv).join("\n"),
+  };
+}
+
 /** The fields that make a kept form again, to be changed and submitted. */
 export function fieldsOf(form: FormView): Fields {
   const { n, k, loops, range } = form.amplitude;
