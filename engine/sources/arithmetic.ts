@@ -39,6 +39,19 @@ export class Modulus {
     return remainder < 0 ? remainder + this.prime : remainder;
   }
 
+  /**
+   * The residue of high * 2^16 + low, for integers |high| and |low| below 2^52. Sums of up to 32 products of a residue and the high (15)
+   * or low (16) bits of another are below that, and exact.
+   */
+  reduceSplit(high: number, low: number): number {
+    const { prime, reciprocal } = this;
+    const above = high - Math.floor(high * reciprocal) * prime;
+    const whole = above * 65536 + low;
+    const residue = whole - Math.floor(whole * reciprocal) * prime;
+    // Either quotient may be off by one; above * 2^16 is then still below 2^49.
+    return residue < 0 ? residue + prime : residue >= prime ? residue - prime : residue;
+  }
+
   /** a b - c d. */
   cross(a: number, b: number, c: number, d: number): number {
     return this.subtract(this.multiply(a, b), this.multiply(c, d));

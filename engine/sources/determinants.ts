@@ -23,16 +23,43 @@ export function lineThroughPlanes(m: Modulus, p: Vector, q: Vector, first: Vecto
 
 /** The covector w of the plane (a b c), for which sum_i x_i w_i = <x a b c>. */
 export function plane(m: Modulus, a: Vector, b: Vector, c: Vector): number[] {
-  const minor = (i: number, j: number) => m.cross(b[i]!, c[j]!, b[j]!, c[i]!);
-  const [m01, m02, m03, m12, m13, m23] = [minor(0, 1), minor(0, 2), minor(0, 3), minor(1, 2), minor(1, 3), minor(2, 3)];
-  const three = (x: number, y: number, z: number, xy: number, xz: number, yz: number) =>
-    m.add(m.subtract(m.multiply(a[x]!, yz), m.multiply(a[y]!, xz)), m.multiply(a[z]!, xy));
-  return [
-    three(1, 2, 3, m12, m13, m23),
-    m.negate(three(0, 2, 3, m02, m03, m23)),
-    three(0, 1, 3, m01, m03, m13),
-    m.negate(three(0, 1, 2, m01, m02, m12)),
-  ];
+  const points = new Int32Array(12);
+  for (const [row, point] of [a, b, c].entries()) for (let i = 0; i < 4; i++) points[4 * row + i] = point[i]!;
+  const out = new Int32Array(4);
+  planeAt(m, points, 0, 4, 8, out);
+  return Array.from(out);
+}
+
+/** The same for three points that begin at a, b and c in one array, written to `out`. */
+export function planeAt(m: Modulus, points: Int32Array, a: number, b: number, c: number, out: Int32Array): void {
+  const b0 = points[b]!;
+  const b1 = points[b + 1]!;
+  const b2 = points[b + 2]!;
+  const b3 = points[b + 3]!;
+  const c0 = points[c]!;
+  const c1 = points[c + 1]!;
+  const c2 = points[c + 2]!;
+  const c3 = points[c + 3]!;
+  const m01 = m.cross(b0, c1, b1, c0);
+  const m02 = m.cross(b0, c2, b2, c0);
+  const m03 = m.cross(b0, c3, b3, c0);
+  const m12 = m.cross(b1, c2, b2, c1);
+  const m13 = m.cross(b1, c3, b3, c1);
+  const m23 = m.cross(b2, c3, b3, c2);
+  const a0 = points[a]!;
+  const a1 = points[a + 1]!;
+  const a2 = points[a + 2]!;
+  const a3 = points[a + 3]!;
+  out[0] = m.add(m.cross(a1, m23, a2, m13), m.multiply(a3, m12));
+  out[1] = m.negate(m.add(m.cross(a0, m23, a2, m03), m.multiply(a3, m02)));
+  out[2] = m.add(m.cross(a0, m13, a1, m03), m.multiply(a3, m01));
+  out[3] = m.negate(m.add(m.cross(a0, m12, a1, m02), m.multiply(a2, m01)));
+}
+
+/** sum_i x_i w_i for the point x that begins at `at`. */
+export function contractAt(m: Modulus, points: Int32Array, at: number, w: Vector): number {
+  const front = m.add(m.multiply(points[at]!, w[0]!), m.multiply(points[at + 1]!, w[1]!));
+  return m.add(front, m.add(m.multiply(points[at + 2]!, w[2]!), m.multiply(points[at + 3]!, w[3]!)));
 }
 
 /** sum_i x_i w_i over four components. */

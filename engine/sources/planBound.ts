@@ -3,7 +3,7 @@ import { addBounds, type Bound, multiplyBounds, polynomial, powerBound, reciproc
 import type { Plan } from "./plan";
 
 /** Degree and log2 of the sum of absolute coefficients of the components of a point and of its Grassmann part. */
-interface PointSize {
+export interface PointSize {
   readonly degree: number;
   readonly bits: number;
   readonly chiDegree: number;
@@ -33,7 +33,7 @@ export const superGrading = (k: number): Grading => ({
   rowBits: 0,
 });
 
-const log2Factorial = (x: number): number => (x < 2 ? 0 : Math.log2(x) + log2Factorial(x - 1));
+export const log2Factorial = (x: number): number => (x < 2 ? 0 : Math.log2(x) + log2Factorial(x - 1));
 const bracketBits = Math.log2(24);
 
 /** The bound of the plan's value, terms over the least common multiple of the distinct brackets in their denominators. */
@@ -47,11 +47,8 @@ export function planBound(plan: Plan, grading: Grading): Bound {
     multiplyBounds(over(a, b, c, d), over(b, c, d, e), over(c, d, e, a), over(d, e, a, b), over(e, a, b, c)),
   );
   const deltaRows = plan.invariants.map((labels) => {
-    const all = labels.reduce((sum, label) => sum + points[label]!.degree, 0);
-    const allBits = labels.reduce((sum, label) => sum + points[label]!.bits, 0);
-    const degree = Math.max(...labels.map((i) => all - points[i]!.degree + points[i]!.chiDegree));
-    const bits = Math.max(...labels.map((i) => allBits - points[i]!.bits + points[i]!.chiBits));
-    return polynomial(degree, bits + Math.log2(5) + bracketBits);
+    const { degree, bits } = rowSize(points, labels);
+    return polynomial(degree, bits);
   });
   const above = polynomial(grading.rowsAbove * grading.rowDegree, grading.rowsAbove * grading.rowBits);
   const permutations = polynomial(0, log2Factorial(grading.dimension));
@@ -90,7 +87,23 @@ export function planCost(plan: Plan, grading: Grading): number {
   return 2 * products;
 }
 
-function pointSizes(plan: Plan, grading: Grading): PointSize[] {
+/** Degree and bits of each component of the argument of an invariant's delta function. */
+export function rowSize(points: readonly PointSize[], labels: readonly number[]): { degree: number; bits: number } {
+  let [all, allBits] = [0, 0];
+  for (const label of labels) {
+    all += points[label]!.degree;
+    allBits += points[label]!.bits;
+  }
+  let [degree, bits] = [0, 0];
+  for (const label of labels) {
+    const point = points[label]!;
+    degree = Math.max(degree, all - point.degree + point.chiDegree);
+    bits = Math.max(bits, allBits - point.bits + point.chiBits);
+  }
+  return { degree, bits: bits + Math.log2(5) + bracketBits };
+}
+
+export function pointSizes(plan: Plan, grading: Grading): PointSize[] {
   const points: PointSize[] = Array.from({ length: plan.basePoints }, () => ({
     degree: 1,
     bits: 0,
@@ -115,7 +128,7 @@ function pointSizes(plan: Plan, grading: Grading): PointSize[] {
   return points;
 }
 
-function bracketSize(points: readonly PointSize[], labels: readonly number[]): [degree: number, bits: number] {
+export function bracketSize(points: readonly PointSize[], labels: readonly number[]): [degree: number, bits: number] {
   return labels.reduce<[number, number]>(
     ([degree, bits], label) => [degree + points[label]!.degree, bits + points[label]!.bits],
     [0, bracketBits],

@@ -1,6 +1,6 @@
 /** Evaluates a plan at one point modulo a 31-bit prime. */
 import type { Modulus } from "./arithmetic";
-import { bracket, contract, determinant, lineThroughPlanes, plane } from "./determinants";
+import { bracket, contractAt, determinant, lineThroughPlanes, plane, planeAt } from "./determinants";
 import type { Plan } from "./plan";
 
 /** A point with its Grassmann part: four components, then for each flavour a vector of `dimension` numbers. */
@@ -32,29 +32,24 @@ export function evaluatePlan(m: Modulus, plan: Plan, base: readonly SuperPoint[]
       points.set(Array.from(row), index * stride + 4 + flavour * dimension);
     });
   });
-  const twistors = Array.from({ length: points.length / stride }, (_, i) =>
-    points.subarray(i * stride, i * stride + 4),
-  );
-  fillMeets(m, plan, points, twistors, stride);
+  fillMeets(m, plan, points, stride);
 
   const rows = new Int32Array(plan.invariants.length * width);
   const denominators = new Int32Array(plan.invariants.length + plan.kermits.length);
   const fives = new Int32Array(5);
-  plan.invariants.forEach((labels, index) => {
+  const sum = new LinearCombination(m, points, 5);
+  for (let index = 0; index < plan.invariants.length; index++) {
+    const labels = plan.invariants[index]!;
     denominators[index] = fiveBrackets(m, points, labels, stride, fives);
-    const start = index * width;
-    for (let column = 0; column < width; column++) {
-      let sum = 0;
-      for (let i = 0; i < 5; i++) sum = m.add(sum, m.multiply(fives[i]!, points[labels[i]! * stride + 4 + column]!));
-      rows[start + column] = sum;
-    }
-  });
+    for (let i = 0; i < 5; i++) sum.set(i, fives[i]!, labels[i]! * stride);
+    sum.write(rows, index * width, 4, stride);
+  }
 
   const numerators = new Int32Array(plan.kermits.length);
   plan.kermits.forEach((labels, index) => {
     const value = kermit(
       m,
-      labels.map((label) => twistors[label]!),
+      labels.map((label) => points.subarray(label * stride, label * stride + 4)),
     );
     numerators[index] = value.numerator;
     denominators[plan.invariants.length + index] = value.denominator;
@@ -103,36 +98,69 @@ export function sumPlan(
 }
 
 /** (a b) cap (c d e) = Z_a <b c d e> - Z_b <a c d e> = -(Z_c <d e a b> + Z_d <e c a b> + Z_e <c d a b>), Grassmann parts likewise. */
-function fillMeets(m: Modulus, plan: Plan, points: Int32Array, twistors: readonly Int32Array[], stride: number): void {
-  const planes = new Map<string, number[]>();
-  plan.meets.forEach(({ line: [a, b], plane: [c, d, e], part }, index) => {
-    const key = `${c} ${d} ${e}`;
-    let covector = planes.get(key);
-    if (covector === undefined) {
-      covector = plane(m, twistors[c]!, twistors[d]!, twistors[e]!);
-      planes.set(key, covector);
-    }
-    const alongA = contract(m, twistors[b]!, covector);
-    const alongB = contract(m, twistors[a]!, covector);
+function fillMeets(m: Modulus, plan: Plan, points: Int32Array, stride: number): void {
+  const covector = new Int32Array(4);
+  const onLine = new LinearCombination(m, points, 2);
+  const onPlane = new LinearCombination(m, points, 3);
+  const at = (point: number) => points.subarray(point * stride, point * stride + 4);
+  for (let index = 0; index < plan.meets.length; index++) {
+    const { line, plane: corners, part } = plan.meets[index]!;
+    const [a, b] = [line[0] * stride, line[1] * stride];
+    const [c, d, e] = [corners[0] * stride, corners[1] * stride, corners[2] * stride];
+    planeAt(m, points, c, d, e, covector);
+    onLine.set(0, contractAt(m, points, b, covector), a);
+    onLine.set(1, m.negate(contractAt(m, points, a, covector)), b);
     const target = (plan.basePoints + index) * stride;
-    const columns = part === "line" ? stride : 4;
-    for (let i = 0; i < columns; i++) {
-      points[target + i] = m.cross(alongA, points[a * stride + i]!, alongB, points[b * stride + i]!);
-    }
-    if (part === "line") return;
-    const weights = [
-      bracket(m, twistors[d]!, twistors[e]!, twistors[a]!, twistors[b]!),
-      bracket(m, twistors[e]!, twistors[c]!, twistors[a]!, twistors[b]!),
-      bracket(m, twistors[c]!, twistors[d]!, twistors[a]!, twistors[b]!),
-    ];
-    for (let i = 4; i < stride; i++) {
-      let sum = 0;
-      for (const [at, corner] of [c, d, e].entries()) {
-        sum = m.add(sum, m.multiply(weights[at]!, points[corner * stride + i]!));
+    onLine.write(points, target, 0, part === "line" ? stride : 4);
+    if (part === "line") continue;
+    const [p, q] = [at(line[0]), at(line[1])];
+    const [u, v, w] = [at(corners[0]), at(corners[1]), at(corners[2])];
+    onPlane.set(0, m.negate(bracket(m, v, w, p, q)), c);
+    onPlane.set(1, m.negate(bracket(m, w, u, p, q)), d);
+    onPlane.set(2, m.negate(bracket(m, u, v, p, q)), e);
+    onPlane.write(points, target + 4, 4, stride);
+  }
+}
+
+/**
+ * sum of scalars times vectors that lie in one array. Scalars are split into 15 high and 16 low bits, so that sums of a few products
+ * are exact in doubles and are reduced once.
+ */
+class LinearCombination {
+  private readonly high: Float64Array;
+  private readonly low: Float64Array;
+  private readonly from: Int32Array;
+
+  constructor(
+    private readonly m: Modulus,
+    private readonly vectors: Int32Array,
+    private readonly length: number,
+  ) {
+    this.high = new Float64Array(length);
+    this.low = new Float64Array(length);
+    this.from = new Int32Array(length);
+  }
+
+  set(place: number, scalar: number, from: number): void {
+    this.high[place] = scalar >>> 16;
+    this.low[place] = scalar & 0xffff;
+    this.from[place] = from;
+  }
+
+  /** Entries first .. end-1 of the combination to out[at], out[at+1], ... */
+  write(out: Int32Array, at: number, first: number, end: number): void {
+    const { high, low, from, vectors, length, m } = this;
+    for (let i = first; i < end; i++) {
+      let above = 0;
+      let below = 0;
+      for (let place = 0; place < length; place++) {
+        const entry = vectors[from[place]! + i]!;
+        above += high[place]! * entry;
+        below += low[place]! * entry;
       }
-      points[target + i] = m.negate(sum);
+      out[at + i - first] = m.reduceSplit(above, below);
     }
-  });
+  }
 }
 
 /**
@@ -146,54 +174,36 @@ function fiveBrackets(
   stride: number,
   out: Int32Array,
 ): number {
-  const front = (i: number, j: number) => {
-    const [p, q] = [labels[i]! * stride, labels[j]! * stride];
-    return m.cross(points[p]!, points[q + 1]!, points[p + 1]!, points[q]!);
-  };
-  const back = (i: number, j: number) => {
-    const [p, q] = [labels[i]! * stride + 2, labels[j]! * stride + 2];
-    return m.cross(points[p]!, points[q + 1]!, points[p + 1]!, points[q]!);
-  };
-  // Minor number 4i + j - (i+1)(i+2)/2 for i < j.
-  const fronts = [
-    front(0, 1),
-    front(0, 2),
-    front(0, 3),
-    front(0, 4),
-    front(1, 2),
-    front(1, 3),
-    front(1, 4),
-    front(2, 3),
-    front(2, 4),
-    front(3, 4),
-  ];
-  const backs = [
-    back(0, 1),
-    back(0, 2),
-    back(0, 3),
-    back(0, 4),
-    back(1, 2),
-    back(1, 3),
-    back(1, 4),
-    back(2, 3),
-    back(2, 4),
-    back(3, 4),
-  ];
-  const four = (ab: number, ac: number, ad: number, bc: number, bd: number, cd: number) => {
-    const outer = m.add(m.multiply(fronts[ab]!, backs[cd]!), m.multiply(fronts[cd]!, backs[ab]!));
-    const middle = m.add(m.multiply(fronts[ac]!, backs[bd]!), m.multiply(fronts[bd]!, backs[ac]!));
-    const inner = m.add(m.multiply(fronts[ad]!, backs[bc]!), m.multiply(fronts[bc]!, backs[ad]!));
-    return m.add(m.subtract(outer, middle), inner);
-  };
+  for (let half = 0; half < 2; half++) {
+    let number = 10 * half;
+    for (let i = 0; i < 4; i++) {
+      const p = labels[i]! * stride + 2 * half;
+      for (let j = i + 1; j < 5; j++) {
+        const q = labels[j]! * stride + 2 * half;
+        minors[number++] = m.cross(points[p]!, points[q + 1]!, points[p + 1]!, points[q]!);
+      }
+    }
+  }
   // <bcde>, <cdea>, <deab>, <eabc>, <abcd>; moving one entry past three others changes the sign, past two does not.
-  out[0] = four(4, 5, 6, 7, 8, 9);
-  out[1] = m.negate(four(1, 2, 3, 7, 8, 9));
-  out[2] = four(0, 2, 3, 5, 6, 9);
-  out[3] = m.negate(four(0, 1, 3, 4, 6, 8));
-  out[4] = four(0, 1, 2, 4, 5, 7);
+  out[0] = fourOf(m, 4, 5, 6, 7, 8, 9);
+  out[1] = m.negate(fourOf(m, 1, 2, 3, 7, 8, 9));
+  out[2] = fourOf(m, 0, 2, 3, 5, 6, 9);
+  out[3] = m.negate(fourOf(m, 0, 1, 3, 4, 6, 8));
+  out[4] = fourOf(m, 0, 1, 2, 4, 5, 7);
   let product = out[0]!;
   for (let i = 1; i < 5; i++) product = m.multiply(product, out[i]!);
   return product;
+}
+
+/** The ten minors of the first and the ten of the last two components: 01, 02, 03, 04, 12, 13, 14, 23, 24, 34. */
+const minors = new Int32Array(20);
+
+/** <abcd> from the numbers of its six minors. */
+function fourOf(m: Modulus, ab: number, ac: number, ad: number, bc: number, bd: number, cd: number): number {
+  const outer = m.add(m.multiply(minors[ab]!, minors[10 + cd]!), m.multiply(minors[cd]!, minors[10 + ab]!));
+  const middle = m.add(m.multiply(minors[ac]!, minors[10 + bd]!), m.multiply(minors[bd]!, minors[10 + ac]!));
+  const inner = m.add(m.multiply(minors[ad]!, minors[10 + bc]!), m.multiply(minors[bc]!, minors[10 + ad]!));
+  return m.add(m.subtract(outer, middle), inner);
 }
 
 /** Numerator and denominator of <AB (a b c) cap (a d e)>^2 / (<AB a b><AB b c><AB c a><AB a d><AB d e><AB e a>). */
