@@ -31,17 +31,70 @@ const field = smallPrimeField(2147483647);
 /** A plain bracket in a product of brackets that people write stands there to a power below this. */
 const seriesTerms = 8;
 
-/** The factors of a bracket of four points; a bracket without meets is its own. */
-export function factorsOf(points: readonly Point[]): readonly Factor[] {
-  if (!points.some((p) => p.kind === "meet" || p.kind === "planes")) return [{ points, power: 1, without: [] }];
+/** The factors of all brackets that differ in nothing but the names of their atoms, atoms numbered by first appearance. */
+type Pattern = readonly { readonly four: readonly number[]; readonly power: number }[];
+
+/** Takes brackets apart, each pattern once: the brackets of a recursion are a few patterns with ever other legs. */
+export class Factoring {
+  readonly #patterns = new Map<string, { readonly factors: Pattern; readonly complete: boolean } | null>();
+
+  /** The factors of a bracket of four points; a bracket without meets is its own. */
+  factorsOf(points: readonly Point[]): readonly Factor[] {
+    const whole = { points, power: 1, without: [] };
+    if (!points.some((p) => p.kind === "meet" || p.kind === "planes")) return [whole];
+    const numbers = new Map<string, number>();
+    const atoms: Point[] = [];
+    const key = points.map((p) => patternOf(p, numbers, atoms)).join(" ");
+    let pattern = this.#patterns.get(key);
+    if (pattern === undefined) {
+      pattern = factorPattern(points, numbers);
+      this.#patterns.set(key, pattern);
+    }
+    if (pattern === null) return [whole];
+    const named = pattern.factors.map(({ four, power }) => ({
+      points: four.map((number) => atoms[number]!).sort((a, b) => (pointText(a) < pointText(b) ? -1 : 1)),
+      power,
+      without: [],
+    }));
+    named.sort((a, b) => compareTexts(a.points, b.points));
+    return pattern.complete ? named : [...named, { points, power: 1, without: named }];
+  }
+}
+
+function compareTexts(a: readonly Point[], b: readonly Point[]): number {
+  for (const [i, p] of a.entries()) {
+    const [x, y] = [pointText(p), pointText(b[i]!)];
+    if (x !== y) return x < y ? -1 : 1;
+  }
+  return 0;
+}
+
+/** A point with its atoms as numbers; atoms that are new are numbered on. */
+function patternOf(p: Point, numbers: Map<string, number>, atoms: Point[]): string {
+  const all = (points: readonly Point[]): string => points.map((q) => patternOf(q, numbers, atoms)).join(" ");
+  if (p.kind === "meet") return `(${all(p.line)}|${all(p.plane)})`;
+  if (p.kind === "planes") return `${p.which}{${all(p.left)}|${all(p.right)}}`;
+  const text = pointText(p);
+  let number = numbers.get(text);
+  if (number === undefined) {
+    number = atoms.length;
+    numbers.set(text, number);
+    atoms.push(p);
+  }
+  return String(number);
+}
+
+/** The plain factors of a bracket with meets, null where it vanishes everywhere: its zero is found where it is evaluated. */
+function factorPattern(
+  points: readonly Point[],
+  numbers: ReadonlyMap<string, number>,
+): { readonly factors: Pattern; readonly complete: boolean } | null {
   const weights = new Map<string, number>();
-  const atoms = new Map<string, Point>();
   for (const atom of points.flatMap(atomsOf)) {
     const name = pointText(atom);
-    atoms.set(name, atom);
     weights.set(name, (weights.get(name) ?? 0) + 1);
   }
-  const names = [...atoms.keys()].sort();
+  const names = [...weights.keys()].sort();
   const random = randomness(`factors|${names.join(" ")}`);
   const draw = (): number => Number(random.below(field.characteristic));
   const drawn = new Map(names.map((name) => [name, [draw(), draw(), draw(), draw()] as Twistor<number>]));
@@ -49,7 +102,7 @@ export function factorsOf(points: readonly Point[]): readonly Factor[] {
   const mixing = [draw(), draw(), draw()];
   const direction: Twistor<number> = [draw(), draw(), draw(), draw()];
 
-  const factors: Factor[] = [];
+  const factors: { four: readonly number[]; power: number }[] = [];
   let left = [...weights.values()].reduce((a, b) => a + b, 0);
   for (const four of subsets(names)) {
     if (left === 0) break;
@@ -65,13 +118,13 @@ export function factorsOf(points: readonly Point[]): readonly Factor[] {
     const power = valuationOf(
       bracketAt<PrimeSeries>(series, points, (atom) => (pointText(atom) === d ? moving : at(pointText(atom)))),
     );
-    // A bracket that vanishes everywhere has every factor: it is left whole, and its zero is found where it is evaluated.
-    if (power === null || !Number.isFinite(power)) return [{ points, power: 1, without: [] }];
-    factors.push({ points: four.map((name) => atoms.get(name)!), power, without: [] });
+    // A bracket that vanishes everywhere has every factor.
+    if (power === null || !Number.isFinite(power)) return null;
+    factors.push({ four: four.map((name) => numbers.get(name)!), power });
     for (const name of four) weights.set(name, (weights.get(name) ?? 0) - power);
     left -= 4 * power;
   }
-  return left === 0 ? factors : [...factors, { points, power: 1, without: factors }];
+  return { factors, complete: left === 0 };
 }
 
 function* subsets(names: readonly string[]): Generator<readonly string[]> {

@@ -22,6 +22,7 @@ import type {
   Operand,
   SpinorEnd,
 } from "../notation/tree";
+import { BracketNames } from "./bracketNames";
 import {
   adjacent,
   factorsOfFour,
@@ -31,9 +32,10 @@ import {
   meetLine,
   meetPoint,
   type Point,
+  pointText,
 } from "./brackets";
 import type { Divisor, FoundPole } from "./divisor";
-import { type Factor, factorsOf } from "./factoring";
+import { type Factor, Factoring } from "./factoring";
 import type { Pole } from "./report";
 import { type PlainString, stringFactors, stringText } from "./strings";
 
@@ -78,8 +80,18 @@ class PoleFinder {
   readonly #definitions: ReadonlyMap<string, Definition>;
   readonly #memo = new Map<string, Orders>();
   readonly #factors = new Map<string, readonly Factor[]>();
+  readonly #factoring = new Factoring();
+  readonly #fives = new Map<string, Orders>();
+  readonly #numbers = new Map<Point, number>();
+  readonly #numbersOfTexts = new Map<string, number>();
+  /** Points of definitions without arguments, and of labels, that nothing moves. */
+  readonly #fixed = new Map<string, readonly Point[]>();
+  readonly #labels: (Point | undefined)[] = [];
+
+  readonly #names: BracketNames;
 
   constructor(private readonly form: FormAtN) {
+    this.#names = new BracketNames(form);
     this.#definitions = definitionsOf(form.formula);
   }
 
@@ -119,13 +131,8 @@ class PoleFinder {
         return this.#call(e, at);
       case "four":
         return this.#fours([this.#points(e.items, at)], 1);
-      case "five": {
-        const points = this.#points(e.items, at);
-        return this.#fours(
-          points.map((_, left) => points.filter((_, i) => i !== left)),
-          -1,
-        );
-      }
+      case "five":
+        return this.#five(this.#points(e.items, at));
       case "delta":
         return none;
       case "angle":
@@ -207,6 +214,32 @@ class PoleFinder {
     return this.#fours([[...this.#dual(left, at), ...this.#dual(right, at)]], 1);
   }
 
+  /** Once for each set of points, which are told apart by what they are known as: terms of a recursion share their invariants. */
+  #five(points: readonly Point[]): Orders {
+    const key = points
+      .map((p) => this.#numberOf(p))
+      .sort((a, b) => a - b)
+      .join(" ");
+    const known = this.#fives.get(key);
+    if (known !== undefined) return known;
+    const orders = this.#fours(
+      points.map((_, left) => points.filter((_, i) => i !== left)),
+      -1,
+    );
+    this.#fives.set(key, orders);
+    return orders;
+  }
+
+  #numberOf(p: Point): number {
+    const known = this.#numbers.get(p);
+    if (known !== undefined) return known;
+    const text = pointText(p);
+    const number = this.#numbersOfTexts.get(text) ?? this.#numbersOfTexts.size;
+    this.#numbersOfTexts.set(text, number);
+    this.#numbers.set(p, number);
+    return number;
+  }
+
   #fours(brackets: readonly (readonly Point[])[], order: number): Orders {
     const total = new Map<string, number>();
     for (const points of brackets)
@@ -218,13 +251,15 @@ class PoleFinder {
             continue;
           }
           const text = `<${itemsText(factor)}>`;
-          this.#note(text, {
+          const key = this.#names.keyOf(factor, without, text);
+          this.#note(key, {
+            text,
             physical: isPhysicalFour(factor, this.form.n),
             reference: holdsReference(factor),
             points: factor,
             without,
           });
-          total.set(text, (total.get(text) ?? 0) + power * order);
+          total.set(key, (total.get(key) ?? 0) + power * order);
         }
     return total;
   }
@@ -233,7 +268,7 @@ class PoleFinder {
     const key = itemsText(points);
     const known = this.#factors.get(key);
     if (known !== undefined) return known;
-    const factors = factorsOf(points);
+    const factors = this.#factoring.factorsOf(points);
     this.#factors.set(key, factors);
     return factors;
   }
@@ -336,7 +371,7 @@ class PoleFinder {
   #item(item: Item, at: Place): readonly Point[] {
     switch (item.kind) {
       case "label":
-        return [{ kind: "label", label: evaluateLabel(item.index, at.bindings, this.form.n, at.shift) }];
+        return [this.#label(evaluateLabel(item.index, at.bindings, this.form.n, at.shift))];
       case "loopPoint": {
         const letter = "ABCDEFGH".indexOf(item.letter);
         const point = line(at, Math.floor(letter / 2))[letter % 2];
@@ -358,13 +393,23 @@ class PoleFinder {
     }
   }
 
+  #label(label: number): Point {
+    this.#labels[label] ??= { kind: "label", label };
+    return this.#labels[label];
+  }
+
   #named(item: NamedItem, at: Place): readonly Point[] {
+    const fixed = item.arguments.length === 0 && at.shift === 0 && at.permutation.length < 2;
+    const known = fixed ? this.#fixed.get(item.name) : undefined;
+    if (known !== undefined) return known;
     const definition = this.#definitions.get(item.name);
     if (definition?.value.kind !== "geometry")
       throw new Error(`findPoles: expected ${item.name} to be a point, line or plane`);
     const place = definitionPlace(definition, item.arguments, at, this.form.n);
     const { geometry } = definition.value;
-    return geometry.kind === "meet" ? this.#meet(geometry, place) : this.#points(geometry.items, place);
+    const points = geometry.kind === "meet" ? this.#meet(geometry, place) : this.#points(geometry.items, place);
+    if (fixed) this.#fixed.set(item.name, points);
+    return points;
   }
 
   #meet(meet: MeetItem, at: Place): readonly Point[] {
