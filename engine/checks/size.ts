@@ -101,7 +101,7 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
   const sampled = drawSamples(seed, prepared, chosen, samples);
   if ("span" in sampled) return { vanishing: sampled.span };
   options.step("poles");
-  const poles = measurePoles(form, findDivisors(form), series, ground);
+  const poles = measurePoles(form, findDivisors(form), series, ground, sampled.values[0]?.terms.length ?? 1);
   const bench: Bench = {
     seed,
     form,

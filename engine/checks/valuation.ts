@@ -15,8 +15,13 @@ import type { SeriesForm, SeriesValue } from "./seriesEvaluator";
 /** A sum of which no coefficient up to this order is left is taken for zero, and has no order. */
 const deepestZero = 2;
 
-/** Field multiplications (of residues, before they become series) that the poles of one form may take. */
-export const poleBudget = 40_000_000;
+/**
+ * Field multiplications (of residues, before they become series) that the poles of one form may take. Within it every pole is
+ * looked at in the whole form; else in the terms that have it, and the order of a sum in which it cancels is not found.
+ */
+export const poleBudget = 15_000_000;
+
+type Grounds = (attempt: number) => Ground;
 
 /**
  * The poles with their orders; those that were not measured have none: the budget ran out, the divisor could not be reached, or the
@@ -26,38 +31,63 @@ export function measurePoles(
   form: FormAtN,
   poles: readonly FoundPole[],
   series: SeriesForm,
-  ground: (attempt: number) => Ground,
+  ground: Grounds,
+  terms: number,
 ): readonly Pole[] {
   const { operations } = series;
-  const affordable = operations * poles.length <= poleBudget;
-  return poles.map((pole) => (affordable ? measure(form, pole, series, ground) : reported(pole)));
+  if (operations * poles.length <= poleBudget) return poles.map((pole) => inWholeForm(form, pole, series, ground));
+  const incidences = poles.reduce((sum, pole) => sum + pole.terms.length, 0);
+  if ((operations / Math.max(1, terms)) * incidences > poleBudget) return poles.map(reported);
+  let left = poleBudget;
+  return poles.map((pole) => {
+    const found = inItsTerms(form, pole, series, ground);
+    if (found.kind === "physical" || (found.order ?? 0) <= 0) return found;
+    // Another term may hold the divisor in a bracket that is a product: only the whole form can say that a spurious pole is left.
+    left -= operations;
+    return left >= 0 ? inWholeForm(form, pole, series, ground) : reported(pole);
+  });
 }
 
-function measure(form: FormAtN, pole: FoundPole, series: SeriesForm, ground: (attempt: number) => Ground): Pole {
+function inWholeForm(form: FormAtN, pole: FoundPole, series: SeriesForm, ground: Grounds): Pole {
   for (let attempt = 0; attempt < mostAttempts; attempt++) {
     const path = pathThrough(form, pole.divisor, ground(attempt));
     if (path === null) continue;
     const found = series.evaluate(
       ground(attempt).field,
       path,
-      ({ sum, terms }) =>
-        terms.every((term) => valuationOf(term) !== null || precisionOf(term) > 0) &&
-        (valuationOf(sum) !== null || precisionOf(sum) > deepestZero),
+      ({ sum, terms }) => polarPartsKnown(terms) && (valuationOf(sum) !== null || precisionOf(sum) > deepestZero),
     );
-    if (found !== null) return withOrders(pole, found);
+    if (found !== null) return withOrders(pole, found, null);
   }
   return reported(pole);
 }
 
-function withOrders(pole: FoundPole, { field, sum, terms }: SeriesValue): Pole {
+/** The other terms have no pole there: a polar part that is left is that of the whole sum. */
+function inItsTerms(form: FormAtN, pole: FoundPole, series: SeriesForm, ground: Grounds): Pole {
+  for (let attempt = 0; attempt < mostAttempts; attempt++) {
+    const path = pathThrough(form, pole.divisor, ground(attempt));
+    if (path === null) continue;
+    const found = series.evaluateTerms(pole.terms, ground(attempt).field, path, ({ terms }) => polarPartsKnown(terms));
+    if (found !== null) return withOrders(pole, found, pole.terms);
+  }
+  return reported(pole);
+}
+
+const polarPartsKnown = (terms: readonly PrimeSeries[]): boolean =>
+  terms.every((term) => valuationOf(term) !== null || precisionOf(term) > 0);
+
+/** `indices` are those of the terms that were evaluated, null for all of the form. */
+function withOrders(pole: FoundPole, { field, sum, terms }: SeriesValue, indices: readonly number[] | null): Pole {
   const orderOf = (x: PrimeSeries): number | null => {
     const valuation = valuationOf(x);
     // -0 is not what a report should hold.
     return valuation === null || valuation === Number.POSITIVE_INFINITY ? null : 0 - valuation;
   };
   const orders = terms.map(orderOf).filter((order) => order !== null);
-  const order = orderOf(sum);
-  const groups = pole.divisor.physical ? [] : cancellingGroups(field, terms);
+  const ofSum = orderOf(sum);
+  const order = indices === null || (ofSum ?? 0) > 0 ? ofSum : null;
+  const found = pole.divisor.physical ? [] : cancellingGroups(field, terms);
+  const groups = indices === null ? found : found.map((group) => group.map((term) => indices[term]!));
   return {
     ...reported(pole),
     ...(orders.length === 0 ? {} : { orderInTerms: Math.max(...orders) }),
@@ -89,11 +119,11 @@ function cancellingGroups(field: PrimeSeriesField, terms: readonly PrimeSeries[]
   }
   const vanishes = (group: readonly number[]): boolean =>
     orders.every((_, i) => group.reduce((sum, index) => (sum + polar.get(index)![i]!) % field.prime, 0) === 0);
-  let left = [...polar.keys()];
-  if (left.length === 0 || !vanishes(left)) return [];
-  const groups: number[][] = [];
-  for (const size of [2, 3, 4]) {
-    if (left.length > (size === 2 ? 2000 : size === 3 ? mostForTriples : mostForQuadruples)) break;
+  if (polar.size === 0 || !vanishes([...polar.keys()])) return [];
+  const groups = opposites(polar, field);
+  let left = [...polar.keys()].filter((index) => !groups.some((pair) => pair.includes(index)));
+  for (const size of [3, 4]) {
+    if (left.length > (size === 3 ? mostForTriples : mostForQuadruples)) break;
     for (let found = smallestGroup(left, size, vanishes); found !== null; found = smallestGroup(left, size, vanishes)) {
       groups.push([...found]);
       left = left.filter((index) => !found!.includes(index));
@@ -101,6 +131,18 @@ function cancellingGroups(field: PrimeSeriesField, terms: readonly PrimeSeries[]
   }
   if (left.length > 0) groups.push(left);
   return groups;
+}
+
+/** Pairs of terms with opposite polar parts, each term in one pair at most. */
+function opposites(polar: ReadonlyMap<number, readonly number[]>, field: PrimeSeriesField): number[][] {
+  const waiting = new Map<string, number[]>();
+  const pairs: number[][] = [];
+  for (const [index, part] of polar) {
+    const partner = waiting.get(part.map((c) => (c === 0 ? 0 : field.prime - c)).join())?.pop();
+    if (partner !== undefined) pairs.push([partner, index]);
+    else waiting.set(part.join(), [...(waiting.get(part.join()) ?? []), index]);
+  }
+  return pairs;
 }
 
 function smallestGroup(

@@ -9,7 +9,7 @@ import { type Ground, mostAttempts } from "../ground";
 import type { Mark } from "../report";
 import type { SeriesForm } from "../seriesEvaluator";
 import { atSomeGround, directionsOf, legTwistor, linePath } from "./linePaths";
-import { markBudget, notApplicable, onlyAmplitudes, overBudget, untested } from "./lower";
+import { lowerBudget, notApplicable, onlyAmplitudes, overBudget, untested } from "./lower";
 import { mhvSeries } from "./mhvSeries";
 
 /** Products of integrands of fewer loops that are subtracted: coefficient, and the lines of each factor. */
@@ -41,7 +41,7 @@ export function logTest(bench: Bench): Mark {
   const regions = n * loops;
   const costly = overBudget(bench, regions);
   if (costly !== null) return costly;
-  if (lower * regions > markBudget)
+  if (lower * regions > lowerBudget)
     return untested("The products of integrands of fewer loops are too large to evaluate.");
   for (let line = 0; line < loops; line++)
     for (let i = 1; i <= n; i++) {

@@ -9,6 +9,7 @@ import { type Ground, mostAttempts } from "../ground";
 import type { Mark } from "../report";
 import { type Approach, atSomeGround, directionsOf, legTwistor, linePath, mixture } from "./linePaths";
 import { notApplicable, onlyAmplitudes, overBudget, untested } from "./lower";
+import { isOpen } from "./spuriousCancel";
 
 /** Where a line is taken, and the largest order of pole there: the sum of the weights of the coordinates that leave the stratum. */
 interface Stratum {
@@ -47,7 +48,7 @@ function simplePoles({ poles }: Bench): Mark {
     const named = higher.slice(0, 4).map((pole) => `${pole.bracket} (order ${pole.order})`);
     return { state: "fails", evidence: `${higher.length} poles are not simple: ${named.join(", ")}.` };
   }
-  const open = poles.filter((pole) => pole.order === undefined).length;
+  const open = poles.filter(isOpen).length;
   if (open > 0) return untested(`The orders of ${open} of ${poles.length} poles were not measured.`);
   return {
     state: "holds",

@@ -4,8 +4,10 @@ import { answering, type Question, type Source } from "../../sources";
 import type { Bench } from "../bench";
 import type { Mark } from "../report";
 
-/** Field multiplications (of residues, before they become series) that one mark may take. */
-export const markBudget = 20_000_000;
+/** Field multiplications (of residues, before they become series) that the form may take in one mark. */
+export const markBudget = 4_000_000;
+/** Operations that the smaller amplitudes may take in one mark. */
+export const lowerBudget = 20_000_000;
 
 export const notApplicable = (evidence: string): Mark => ({ state: "notApplicable", evidence });
 export const untested = (evidence: string): Mark => ({ state: "untested", evidence });
@@ -26,10 +28,13 @@ const named = {
   zero: "an identity",
 } as const;
 
+export const fitsBudget = ({ series }: Bench, evaluations: number): boolean =>
+  series.operations * evaluations <= markBudget;
+
 /** Where `evaluations` of the form in series are more than a mark may take. */
-export function overBudget({ series }: Bench, evaluations: number): Mark | null {
-  const cost = series.operations * evaluations;
-  if (cost <= markBudget) return null;
+export function overBudget(bench: Bench, evaluations: number): Mark | null {
+  const { series } = bench;
+  if (fitsBudget(bench, evaluations)) return null;
   const count = (x: number): string => x.toLocaleString("en");
   return untested(
     `It would take ${evaluations} evaluations in Laurent series of ${count(series.operations)} multiplications each, more than the ${count(markBudget)} that one mark may take.`,
@@ -56,7 +61,7 @@ export type Lower =
 export function lowerAmplitude(question: Question): Lower {
   if (question.k < 0 || question.k > question.n - 4) return { kind: "zero" };
   const [source] = answering(question);
-  if (source === undefined || source.cost(question) > markBudget) return { kind: "unknown", question };
+  if (source === undefined || source.cost(question) > lowerBudget) return { kind: "unknown", question };
   return { kind: "source", question, source };
 }
 

@@ -13,8 +13,7 @@ export function spuriousCancel({ poles, ground }: Bench): Mark {
       state: "fails",
       evidence: `${left.length} of ${spurious.length} spurious poles are left in the sum: ${named(left)}, ${where}.`,
     };
-  // A pole without an order and without groups was not measured; one with groups cancels in a value that vanishes.
-  const open = spurious.filter((p) => p.order === undefined && p.groups === undefined);
+  const open = spurious.filter(isOpen);
   if (open.length > 0)
     return {
       state: "untested",
@@ -26,6 +25,10 @@ export function spuriousCancel({ poles, ground }: Bench): Mark {
     spurious.length === 1 ? "The one spurious pole cancels" : `All ${spurious.length} spurious poles cancel`;
   return { state: "holds", evidence: `${cancelled} in the sum, ${where}.${groups}` };
 }
+
+/** A pole that was not measured. One without an order that no term has, or that cancels in groups of terms, was. */
+export const isOpen = ({ order, groups, orderInTerms }: Pole): boolean =>
+  order === undefined && groups === undefined && (orderInTerms ?? 1) > 0;
 
 function named(poles: readonly Pole[]): string {
   const shown = poles.slice(0, 6).map((p) => (p.order === undefined ? p.bracket : `${p.bracket} (order ${p.order})`));

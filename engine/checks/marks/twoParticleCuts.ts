@@ -9,7 +9,7 @@ import type { Bench } from "../bench";
 import { type Ground, mostAttempts } from "../ground";
 import type { Mark } from "../report";
 import { firstUnknown, splittings, sumOverSplittings } from "./distributions";
-import { markBudget, missingSource, notApplicable, onlyAmplitudes, overBudget, primeText, untested } from "./lower";
+import { lowerBudget, missingSource, notApplicable, onlyAmplitudes, overBudget, primeText, untested } from "./lower";
 import { combine, type Leg, legOf, moved, withLine } from "./moves";
 import { buildProduct, type Side, sideExists, sideTerms, sumOfProducts } from "./products";
 
@@ -69,7 +69,7 @@ function notKnown(bench: Bench, cuts: readonly Cut[]): Mark | null {
   const terms = cuts
     .flatMap((cut) => sidesOf(bench, cut))
     .reduce((sum, [one, other]) => sum + sideTerms(one) * sideTerms(other), 0);
-  if (terms * (60 + 4 * k ** 3) <= markBudget) return null;
+  if (terms * (60 + 4 * k ** 3) <= lowerBudget) return null;
   return untested(
     `The products of lower amplitudes that the cuts are compared with have ${terms.toLocaleString("en")} terms, more than one mark may take.`,
   );
