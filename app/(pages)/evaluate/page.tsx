@@ -1,7 +1,7 @@
 import type { Metadata } from "next";
 import { EvaluateForm } from "../../_ui/evaluate/EvaluateForm";
 import { fieldsOfQuery } from "../../_ui/evaluate/evaluateFields";
-import { Lead, Opening, Page, Section } from "../../_ui/Page";
+import { Lead, Opening, Page } from "../../_ui/Page";
 import { evaluateFields } from "./actions";
 import { evaluated } from "./evaluated";
 
@@ -14,7 +14,6 @@ export default async function EvaluatePage({
   searchParams: Promise<Record<string, string | string[] | undefined>>;
 }) {
   const initial = await evaluated(fieldsOfQuery(await searchParams), true);
-  const answered = initial.reply !== null || initial.problem !== null;
   return (
     <Page>
       <Opening title="Values at points">
@@ -27,9 +26,7 @@ export default async function EvaluatePage({
           form is evaluated again in three other frames; the largest difference, times three, is the error.
         </p>
       </Opening>
-      <Section id="values" head={answered ? "Values" : "Evaluate"} wide>
-        <EvaluateForm initial={initial} action={evaluateFields} />
-      </Section>
+      <EvaluateForm initial={initial} action={evaluateFields} />
     </Page>
   );
 }

@@ -1,16 +1,18 @@
 /** `npm run bench`: the fast evaluator against its targets, as ratios within one run. Prints a table, or JSON with --json. */
 import { cpus } from "node:os";
 import { join } from "node:path";
+import { checks } from "./checks";
 import { costs } from "./costs";
 import type { Report } from "./report";
 import { sums } from "./sums";
 import { typing } from "./typing";
 
-/** The parts of the bench by name; `--only NAME` runs one. `large` takes minutes and a gibibyte or two, and runs only when it is asked for. */
+/** The parts of the bench by name; `--only NAME` runs one. `large` takes minutes and a gibibyte or two, `checks` minutes: these run only when they are asked for. */
 const parts: Readonly<Record<string, (report: Report, root: string) => void>> = {
   w: (report, root) => sums(report, join(root, "engine", "tape", "bench", "tape.c")),
   typing: (report) => typing(report),
   cost: (report) => costs(report, ["9,3", "10,3", "11,4", "12,4", "13,5"]),
+  checks: (report, root) => checks(report, root),
   large: (report) => costs(report, ["14,5", "16,6"]),
 };
 const always = ["w", "typing", "cost"];

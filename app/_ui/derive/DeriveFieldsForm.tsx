@@ -2,14 +2,14 @@ import styles from "../editor/SubmitForm.module.css";
 import type { DeriveFields } from "./deriveQuery";
 
 const methods = [
-  ["recursion", "on-shell recursion: trees and one loop, every n and k"],
-  ["vertex", "vertex expansion: trees with k = 1, one loop with k = 0"],
-  ["local", "local integrals: one and two loops with k = 0"],
+  ["recursion", "on-shell recursion"],
+  ["vertex", "vertex expansion"],
+  ["local", "local integrals"],
 ] as const;
 
 const directions = [
-  ["forward", "towards the leg before it"],
-  ["backward", "towards the leg after it"],
+  ["forward", "towards the leg before"],
+  ["backward", "towards the leg after"],
 ] as const;
 
 /** A plain form whose address can be kept. */
@@ -23,16 +23,24 @@ export function DeriveFieldsForm({ fields }: { fields: DeriveFields }) {
       </span>
     </p>
   );
-  const choice = (name: "method" | "direction", label: string, options: readonly (readonly [string, string])[]) => (
+  const choice = (
+    name: "method" | "direction",
+    label: string,
+    help: string,
+    options: readonly (readonly [string, string])[],
+  ) => (
     <p className={`${styles.field} ${styles.middle}`}>
       <label htmlFor={name}>{label}</label>
-      <select id={name} name={name} defaultValue={fields[name]}>
+      <select id={name} name={name} defaultValue={fields[name]} aria-describedby={`${name}-help`}>
         {options.map(([value, words]) => (
           <option key={value} value={value}>
             {words}
           </option>
         ))}
       </select>
+      <span id={`${name}-help`} className={styles.help}>
+        {help}
+      </span>
     </p>
   );
   return (
@@ -45,9 +53,14 @@ export function DeriveFieldsForm({ fields }: { fields: DeriveFields }) {
       </fieldset>
       <fieldset className={styles.fields}>
         <legend>The method</legend>
-        {choice("method", "Method", methods)}
-        {number("leg", "Shifted leg", "of the recursion; n where it is empty")}
-        {choice("direction", "Shift of the recursion", directions)}
+        {choice(
+          "method",
+          "Method",
+          "recursion: trees and one loop, every k; vertices: trees with k = 1, one loop with k = 0; local: one and two loops with k = 0",
+          methods,
+        )}
+        {number("leg", "Shifted leg", "n where it is empty")}
+        {choice("direction", "Shifted", "leg and direction are of the recursion only", directions)}
       </fieldset>
       <p className={styles.send}>
         <button type="submit">Derive</button>

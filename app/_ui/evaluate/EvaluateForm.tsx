@@ -4,6 +4,7 @@ import { useActionState } from "react";
 import type { EvaluateReply, Problem } from "../../_contract";
 import { Diagnostics } from "../Diagnostics";
 import styles from "../editor/SubmitForm.module.css";
+import { Section } from "../Page";
 import own from "./Evaluate.module.css";
 import { addressOf, type EvaluateFields } from "./evaluateFields";
 import { ValueResult } from "./ValueResult";
@@ -27,18 +28,26 @@ export function EvaluateForm({ initial, action }: { initial: EvaluateState; acti
   const state = after ?? initial;
   return (
     <>
-      <Result state={state} />
-      <form key={JSON.stringify(state.fields)} className={styles.form} action={act} noValidate>
-        <WhatFields fields={state.fields} />
-        <WhereFields fields={state.fields} />
-        <HowFields fields={state.fields} />
-        <p className={styles.send}>
-          <button type="submit" disabled={acting}>
-            {acting ? "Evaluating" : "Evaluate"}
-          </button>
-          <span>At most 1,000 points and 2,000 values here; the command line has no such limit.</span>
-        </p>
-      </form>
+      <div aria-live="polite" className={own.live}>
+        {(state.reply !== null || state.problem !== null) && (
+          <Section id="values" head={state.problem === null ? "Values" : "No values"} wide>
+            <Result state={state} />
+          </Section>
+        )}
+      </div>
+      <Section id="ask" head="Evaluate" wide>
+        <form key={JSON.stringify(state.fields)} className={styles.form} action={act} noValidate>
+          <WhatFields fields={state.fields} />
+          <WhereFields fields={state.fields} />
+          <HowFields fields={state.fields} />
+          <p className={styles.send}>
+            <button type="submit" disabled={acting}>
+              {acting ? "Evaluating" : "Evaluate"}
+            </button>
+            <span>At most 1,000 points and 2,000 values here; the command line has no such limit.</span>
+          </p>
+        </form>
+      </Section>
     </>
   );
 }
@@ -46,7 +55,7 @@ export function EvaluateForm({ initial, action }: { initial: EvaluateState; acti
 function Result({ state }: { state: EvaluateState }) {
   const { reply, problem, fields, notation, addressed } = state;
   return (
-    <div aria-live="polite" className={styles.faults}>
+    <>
       {problem !== null && (
         <>
           <p className={styles.problem}>{problem.detail}</p>
@@ -60,7 +69,7 @@ function Result({ state }: { state: EvaluateState }) {
           address={addressed ? addressOf({ ...fields, seed: reply.seed ?? fields.seed }) : null}
         />
       )}
-    </div>
+    </>
   );
 }
 
@@ -105,8 +114,8 @@ function WhatFields({ fields }: { fields: EvaluateFields }) {
             <input key={name} type="hidden" name={name} value={fields[name]} />
           ))}
           <p className={styles.wide}>
-            Or, while the box below is empty, the derived form: {fields.derived}, n = {fields.n}, k = {fields.k}, loops
-            = {fields.loops}
+            Where neither an identifier nor a formula is given: the form derived by {fields.derived}, n = {fields.n}, k
+            = {fields.k}, loops = {fields.loops}
             {fields.leg !== "" && <>, leg {fields.leg}</>}.
           </p>
         </>
