@@ -76,6 +76,8 @@ class Inference {
   readonly #faults: WeightFault[] = [];
   readonly #definitions: ReadonlyMap<string, Definition>;
   readonly #memo = new Map<string, Weight>();
+  /** Of every R-invariant: weights are shared, and never changed once they are handed on. */
+  readonly #invariantWeight: Int32Array;
   #etaDiffers = false;
 
   constructor(private readonly form: FormAtN) {
@@ -83,6 +85,7 @@ class Inference {
     this.#size = this.#names.length;
     this.#star = form.n + 2 * form.loops;
     this.#definitions = definitionsOf(form.formula);
+    this.#invariantWeight = this.#entry(this.#star + 3, 4);
   }
 
   run(target: string): WeightReport {
@@ -154,7 +157,7 @@ class Inference {
       case "negate":
         return this.#expression(e.operand, c);
       case "multiply":
-        return e.factors.reduce<Weight>((w, f) => sum(w, this.#expression(f, c), 1), this.#zero());
+        return this.#product(e.factors, c);
       case "divide":
         return sum(this.#expression(e.numerator, c), this.#expression(e.denominator, c), -1);
       case "power": {
@@ -184,7 +187,7 @@ class Inference {
       case "four":
         return this.#items(e.items, c);
       case "five":
-        return this.#entry(this.#star + 3, 4);
+        return this.#invariantWeight;
       case "delta":
         return sum(scaled(this.#items(e.items, c), 4), this.#entry(this.#star + 3, 4), 1);
       case "angle":
@@ -215,6 +218,18 @@ class Inference {
       case "distance":
         return this.#entry(this.#star + 2, -2);
     }
+  }
+
+  #product(factors: readonly Expression[], c: Place): Weight {
+    const total = this.#zero();
+    let zero = false;
+    for (const factor of factors) {
+      // Every factor is looked at, also beside a zero: it may hold a fault.
+      const weight = this.#expression(factor, c);
+      if (weight === null) zero = true;
+      else for (let i = 0; i < this.#size; i++) increase(total, i, weight[i]!);
+    }
+    return zero ? null : total;
   }
 
   /** Weights of summands that must be one weight; the first mismatch of each kind is a fault. */

@@ -42,19 +42,34 @@ const kermitKey = ({ pivot, first, second }: Kermit): string =>
 /** Collects the definitions of one formula in the order of first use. */
 class Writer {
   readonly definitions: Definition[] = [];
-  private readonly names = new Map<string, string>();
+  private readonly items = new Map<string, Item>();
+  private readonly invariants = new Map<readonly Vertex[], Expression>();
 
+  /** Nodes of the tree are shared: a recursion of many terms is made of few points and invariants. */
   item(point: Vertex): Item {
-    if (point.kind === "leg") return label(null, point.leg);
-    return named(this.names.get(point.key) ?? this.define(point));
+    let item = this.items.get(point.key);
+    if (item === undefined) {
+      item = point.kind === "leg" ? label(null, point.leg) : named(this.define(point));
+      this.items.set(point.key, item);
+    }
+    return item;
+  }
+
+  /** The recursion hands the same list of points to all terms that hold an invariant. */
+  invariant(bracket: readonly Vertex[]): Expression {
+    let invariant = this.invariants.get(bracket);
+    if (invariant === undefined) {
+      invariant = five(...readable(bracket).map((point) => this.item(point)));
+      this.invariants.set(bracket, invariant);
+    }
+    return invariant;
   }
 
   private define(point: Meet): string {
     const side = (parts: readonly (Vertex | "AB")[]): Operand =>
       group(parts.map((part) => (part === "AB" ? loopLine(0) : this.item(part))));
     const geometry = meet(side(point.line === "AB" ? ["AB"] : point.line), side(point.plane));
-    const name = `p${this.names.size + 1}`;
-    this.names.set(point.key, name);
+    const name = `p${this.definitions.length + 1}`;
     this.definitions.push(define(name, [], { kind: "geometry", geometry }));
     return name;
   }
@@ -80,7 +95,7 @@ export function writeTerms(terms: readonly Term[]): Formula {
   }
   const shared = new Map<string, { name: string; definition: Definition }>();
   const summands = terms.map(({ brackets, kermit }) => {
-    const invariants = brackets.map((bracket) => five(...readable(bracket).map((point) => writer.item(point))));
+    const invariants = brackets.map((bracket) => writer.invariant(bracket));
     if (kermit === null) return invariants.length === 0 ? integer(1) : multiply(invariants);
     const key = kermitKey(kermit);
     if (uses.get(key) === 1) {

@@ -49,17 +49,38 @@ function inventory(formula: Formula): Inventory {
   return made;
 }
 
+/** Nodes with nothing inside but index expressions. */
+const LEAVES = new Set([
+  "label",
+  "loopPoint",
+  "loopLine",
+  "referenceTwistor",
+  "referenceLine",
+  "integer",
+  "index",
+  "unknown",
+  "call",
+  "named",
+  "bar",
+  "single",
+  "range",
+]);
+
 function takeInventory(formula: Formula): Inventory {
   const definitions = new Map(formula.definitions.map((definition) => [definition.name, definition.value]));
   const kinds = new Set<string>();
   const names = new Set<string>();
-  const waiting: { node: unknown; inDistance: boolean }[] = [{ node: formula.expression, inDistance: false }];
+  /** R-invariants that were looked into: derived forms share their nodes, and have hundreds of thousands of them. */
+  const seen = new Set<object>();
+  const used: unknown[] = [formula.expression];
   let [loopsInDistances, loopsElsewhere] = [false, false];
-  for (let work = waiting.pop(); work !== undefined; work = waiting.pop()) {
-    const { node, inDistance } = work;
-    if (typeof node !== "object" || node === null) continue;
+  const visit = (node: object, inDistance: boolean): void => {
     const { kind, name } = node as { kind?: unknown; name?: unknown };
     if (typeof kind === "string") {
+      if (kind === "five") {
+        if (seen.has(node)) return;
+        seen.add(node);
+      }
       kinds.add(kind);
       if (kind === "loopLine" || kind === "loopPoint") {
         if (inDistance) loopsInDistances = true;
@@ -67,12 +88,18 @@ function takeInventory(formula: Formula): Inventory {
       }
       if ((kind === "call" || kind === "named") && typeof name === "string" && !names.has(name)) {
         names.add(name);
-        waiting.push({ node: definitions.get(name), inDistance: false });
+        used.push(definitions.get(name));
       }
+      if (LEAVES.has(kind)) return;
     }
     const inner = inDistance || kind === "distance";
-    for (const child of Object.values(node)) waiting.push({ node: child, inDistance: inner });
-  }
+    for (const key in node) {
+      const child = (node as Record<string, unknown>)[key];
+      if (key !== "span" && typeof child === "object" && child !== null) visit(child, inner);
+    }
+  };
+  // The tree is not deeper than the limit on nesting; definitions wait their turn.
+  for (let root = used.pop(); root !== undefined; root = used.pop()) visit(root as object, false);
   return { kinds, loopsInDistances, loopsElsewhere };
 }
 
