@@ -127,23 +127,36 @@ test("a double click submits once, and so does a retry after the answer was lost
   expect(await countForms(request, "n5k1L0")).toBe(before + 1);
 });
 
-test("a form of two thousand terms can be typed into without waiting", async ({ page }) => {
-  const terms = Array.from({ length: 2000 }, (_, i) => `${i + 1} [1 2 3 ${4 + (i % 2)} 6]`).join("\n+ ");
-  await page.goto("/submit?n=6&k=1&loops=0");
-  const editor = page.getByRole("textbox", { name: "Formula, in the notation" });
-  await editor.click();
-  await page.keyboard.insertText(terms);
-  await expect(page.getByText("2,000 terms at n = 6")).toBeVisible();
-  await page.evaluate(() => {
+test("a draft of two thousand terms comes back and can be typed into without waiting", async ({ page }) => {
+  const notation = Array.from({ length: 2000 }, (_, i) => `${i + 1} [1 2 3 ${4 + (i % 2)} 6]`).join("\n+ ");
+  await page.addInitScript((text) => {
+    const fields = {
+      n: "6",
+      k: "1",
+      loops: "0",
+      component: "",
+      target: "amplitude",
+      square: "<ab>[ab]",
+      notation: text,
+    };
+    const about = { title: "", method: "", references: "", note: "" };
+    localStorage.setItem("equiform-draft-1", JSON.stringify({ fields: { ...fields, ...about }, attempt: null }));
     const holder = window as unknown as { longest: number };
     holder.longest = 0;
     new PerformanceObserver((list) => {
       for (const entry of list.getEntries()) holder.longest = Math.max(holder.longest, entry.duration);
     }).observe({ type: "longtask" });
+  }, notation);
+  await page.goto("/submit");
+  await expect(page.getByText("2,000 terms at n = 6")).toBeVisible();
+  await page.getByRole("textbox", { name: "Formula, in the notation" }).click();
+  await page.evaluate(() => {
+    (window as unknown as { longest: number }).longest = 0;
   });
-  await page.keyboard.type(" + [1 2 3 4 5]", { delay: 40 });
+  await page.keyboard.type("7 + ", { delay: 60 });
   await expect(page.getByText("2,001 terms at n = 6")).toBeVisible();
-  expect(await page.evaluate(() => (window as unknown as { longest: number }).longest)).toBeLessThan(200);
+  // A bound that holds on a machine busy with other work; a parse on the page's own thread would take longer.
+  expect(await page.evaluate(() => (window as unknown as { longest: number }).longest)).toBeLessThan(400);
 });
 
 test.describe("without script", () => {
