@@ -66,7 +66,9 @@ function trees(point: Point<number>, i: number, j: number): number {
       ? timesTerms(tree(one, kL), tree(other, k - kL))
       : [],
   );
-  return sumPlan(m, builder.finish(terms), legsOf(point, n), k);
+  const value = sumPlan(m, builder.finish(terms), legsOf(point, n), k);
+  if (value === null) throw new Error("trees: a bad point");
+  return value;
 }
 
 const pairs = (n: number): [number, number][] =>
