@@ -73,7 +73,7 @@ function ValueTable({ rows }: { rows: readonly ValueRow[] }) {
   const [components, complex, approximate] = [has("helicities"), has("im"), has("digits")];
   const fractions = !complex && rows.some(({ re }) => re.includes("/"));
   return (
-    <TableBox label="Values">
+    <TableBox label="Table of values">
       <thead>
         <tr>
           <th scope="col">Point</th>
