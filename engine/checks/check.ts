@@ -67,8 +67,11 @@ function checkSizes(form: Form, options: CheckOptions): CheckRecord {
   const digest = digestOf(form);
   const total = sizes.length * stagesPerSize;
   let done = 0;
-  const step = (stage: string): void => {
+  const alive = (): void => {
     if (options.cancelled?.()) throw new CheckCancelled();
+  };
+  const step = (stage: string): void => {
+    alive();
     options.progress?.({ stage, done: Math.min(done, total), total });
     done += 1;
   };
@@ -82,6 +85,7 @@ function checkSizes(form: Form, options: CheckOptions): CheckRecord {
       accepted: accepted.map(({ name, form: other }) => ({ name, form: formAt(other, n) })),
       ...(options.sources === undefined ? {} : { sources: options.sources }),
       step,
+      alive,
       budget: options.budget ?? defaultBudget,
     });
     if ("vanishing" in outcome)

@@ -12,30 +12,12 @@ import {
   symmetricPlaces,
 } from "../notation/expand";
 import { evaluateLabel, evaluateNumber, momentumLegs } from "../notation/indices";
-import type {
-  Definition,
-  DualPoint,
-  Expression,
-  Item,
-  MeetItem,
-  NamedItem,
-  Operand,
-  SpinorEnd,
-} from "../notation/tree";
+import type { Definition, DualPoint, Expression, SpinorEnd } from "../notation/tree";
 import { BracketNames } from "./bracketNames";
-import {
-  adjacent,
-  factorsOfFour,
-  holdsReference,
-  isPhysicalFour,
-  itemsText,
-  meetLine,
-  meetPoint,
-  type Point,
-  pointText,
-} from "./brackets";
+import { adjacent, factorsOfFour, holdsReference, isPhysicalFour, itemsText, type Point, pointText } from "./brackets";
 import type { Divisor, FoundPole } from "./divisor";
 import { type Factor, Factoring } from "./factoring";
+import { PlacedPoints } from "./placedPoints";
 import type { Pole } from "./report";
 import { type PlainString, stringFactors, stringText } from "./strings";
 
@@ -84,15 +66,13 @@ class PoleFinder {
   readonly #fives = new Map<string, Orders>();
   readonly #numbers = new Map<Point, number>();
   readonly #numbersOfTexts = new Map<string, number>();
-  /** Points of definitions without arguments, and of labels, that nothing moves. */
-  readonly #fixed = new Map<string, readonly Point[]>();
-  readonly #labels: (Point | undefined)[] = [];
-
   readonly #names: BracketNames;
+  readonly #placed: PlacedPoints;
 
   constructor(private readonly form: FormAtN) {
     this.#names = new BracketNames(form);
     this.#definitions = definitionsOf(form.formula);
+    this.#placed = new PlacedPoints(form.n, this.#definitions);
   }
 
   orders(e: Expression, at: Place): Orders {
@@ -130,13 +110,13 @@ class PoleFinder {
       case "call":
         return this.#call(e, at);
       case "four":
-        return this.#fours([this.#points(e.items, at)], 1);
+        return this.#fours([this.#placed.points(e.items, at)], 1);
       case "five":
-        return this.#five(this.#points(e.items, at));
+        return this.#five(this.#placed.points(e.items, at));
       case "delta":
         return none;
       case "angle":
-        return this.#angle(this.#points(e.items, at));
+        return this.#angle(this.#placed.points(e.items, at));
       case "square":
         return this.#square(e.left, e.right, at);
       case "string":
@@ -211,7 +191,7 @@ class PoleFinder {
       const [i, j] = [left, right].map((end) => evaluateLabel(end.index, at.bindings, n, at.shift)) as [number, number];
       if (i !== j) return this.#mandelstam(cyclicRange(n, i, j - 1));
     }
-    return this.#fours([[...this.#dual(left, at), ...this.#dual(right, at)]], 1);
+    return this.#fours([[...this.#placed.dual(left, at), ...this.#placed.dual(right, at)]], 1);
   }
 
   /** Once for each set of points, which are told apart by what they are known as: terms of a recursion share their invariants. */
@@ -354,87 +334,6 @@ class PoleFinder {
   #end(end: SpinorEnd, at: Place): string {
     return end.kind === "label" ? String(evaluateLabel(end.index, at.bindings, this.form.n, at.shift)) : "*";
   }
-
-  #dual(point: DualPoint, at: Place): readonly Point[] {
-    if (point.kind === "loopLine") return line(at, point.loop);
-    const label = evaluateLabel(point.index, at.bindings, this.form.n, at.shift);
-    return [
-      { kind: "label", label: label === 1 ? this.form.n : label - 1 },
-      { kind: "label", label },
-    ];
-  }
-
-  #points(items: readonly Item[], at: Place): readonly Point[] {
-    return items.flatMap((item) => this.#item(item, at));
-  }
-
-  #item(item: Item, at: Place): readonly Point[] {
-    switch (item.kind) {
-      case "label":
-        return [this.#label(evaluateLabel(item.index, at.bindings, this.form.n, at.shift))];
-      case "loopPoint": {
-        const letter = "ABCDEFGH".indexOf(item.letter);
-        const point = line(at, Math.floor(letter / 2))[letter % 2];
-        return point === undefined ? [] : [point];
-      }
-      case "loopLine":
-        return line(at, item.loop);
-      case "referenceTwistor":
-        return [{ kind: "star" }];
-      case "referenceLine":
-        return [
-          { kind: "reference", which: 0 },
-          { kind: "reference", which: 1 },
-        ];
-      case "meet":
-        return this.#meet(item, at);
-      case "named":
-        return this.#named(item, at);
-    }
-  }
-
-  #label(label: number): Point {
-    this.#labels[label] ??= { kind: "label", label };
-    return this.#labels[label];
-  }
-
-  #named(item: NamedItem, at: Place): readonly Point[] {
-    const fixed = item.arguments.length === 0 && at.shift === 0 && at.permutation.length < 2;
-    const known = fixed ? this.#fixed.get(item.name) : undefined;
-    if (known !== undefined) return known;
-    const definition = this.#definitions.get(item.name);
-    if (definition?.value.kind !== "geometry")
-      throw new Error(`findPoles: expected ${item.name} to be a point, line or plane`);
-    const place = definitionPlace(definition, item.arguments, at, this.form.n);
-    const { geometry } = definition.value;
-    const points = geometry.kind === "meet" ? this.#meet(geometry, place) : this.#points(geometry.items, place);
-    if (fixed) this.#fixed.set(item.name, points);
-    return points;
-  }
-
-  #meet(meet: MeetItem, at: Place): readonly Point[] {
-    const left = this.#operand(meet.left, at);
-    const right = this.#operand(meet.right, at);
-    if (left.length === 3 && right.length === 3) return meetLine(left, right);
-    return [left.length === 2 ? meetPoint(left, right) : meetPoint(right, left)];
-  }
-
-  #operand(operand: Operand, at: Place): readonly Point[] {
-    if (operand.kind === "group") return this.#points(operand.items, at);
-    return [-1, 0, 1].map((offset) => ({
-      kind: "label",
-      label: evaluateLabel(operand.index, at.bindings, this.form.n, at.shift + offset),
-    }));
-  }
-}
-
-function line(at: Place, loop: number): readonly Point[] {
-  const moved = at.permutation[loop];
-  if (moved === undefined) throw new Error(`findPoles: no loop line ${loop}`);
-  return [
-    { kind: "letter", line: moved, which: 0 },
-    { kind: "letter", line: moved, which: 1 },
-  ];
 }
 
 function combined(a: Orders, b: Orders, factor: number): Orders {

@@ -49,6 +49,8 @@ export interface SizeOptions {
   readonly sources?: readonly string[];
   /** Called between steps with the stage; throws to cancel. */
   readonly step: (stage: string) => void;
+  /** Called often within a step; throws to cancel. */
+  readonly alive: () => void;
   /** Operations that comparisons and marks may take; the cheapest comparisons come first. */
   readonly budget: number;
 }
@@ -101,7 +103,14 @@ export function checkSize(form: FormAtN, options: SizeOptions): SizeOutcome {
   const sampled = drawSamples(seed, prepared, chosen, samples);
   if ("span" in sampled) return { vanishing: sampled.span };
   options.step("poles");
-  const poles = measurePoles(form, findDivisors(form), series, ground, sampled.values[0]?.terms.length ?? 1);
+  const poles = measurePoles(
+    form,
+    findDivisors(form),
+    series,
+    ground,
+    sampled.values[0]?.terms.length ?? 1,
+    options.alive,
+  );
   const bench: Bench = {
     seed,
     form,

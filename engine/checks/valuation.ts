@@ -26,6 +26,8 @@ type Grounds = (attempt: number) => Ground;
 /**
  * The poles with their orders; those that were not measured have none: the budget ran out, the divisor could not be reached, or the
  * value vanishes identically.
+ * @param terms the number of terms of the form
+ * @param alive called before every pole; throws to cancel
  */
 export function measurePoles(
   form: FormAtN,
@@ -33,13 +35,19 @@ export function measurePoles(
   series: SeriesForm,
   ground: Grounds,
   terms: number,
+  alive: () => void = () => {},
 ): readonly Pole[] {
   const { operations } = series;
-  if (operations * poles.length <= poleBudget) return poles.map((pole) => inWholeForm(form, pole, series, ground));
+  if (operations * poles.length <= poleBudget)
+    return poles.map((pole) => {
+      alive();
+      return inWholeForm(form, pole, series, ground);
+    });
   const incidences = poles.reduce((sum, pole) => sum + pole.terms.length, 0);
   if ((operations / Math.max(1, terms)) * incidences > poleBudget) return poles.map(reported);
   let left = poleBudget;
   return poles.map((pole) => {
+    alive();
     const found = inItsTerms(form, pole, series, ground);
     if (found.kind === "physical" || (found.order ?? 0) <= 0) return found;
     // Another term may hold the divisor in a bracket that is a product: only the whole form can say that a spurious pole is left.
