@@ -115,30 +115,46 @@ export class Factors {
     const [first] = summands;
     if (first === undefined) return this.one();
     if (summands.length === 1) return first;
-    const { top, bottom } = this.commonSum(summands);
+    const { top, bottom } = this.commonSum(summands.map((summand) => [summand]));
     const key = summands.map((summand) => this.internKey(summand)).join("+");
     return { top: [this.factor(`(${key})`, top), 1], bottom };
   }
 
-  /** The sum of any number of summands, which are not kept: a form may have hundreds of thousands of terms. */
-  commonSum(summands: Iterable<Quotient>): CommonSum {
-    /** By factor the highest exponent in a denominator. */
-    const exponents: number[] = [];
+  /**
+   * The sum of any number of summands, each the product of a list; neither summands nor products are kept: a form may have hundreds of
+   * thousands of terms.
+   */
+  commonSum(summands: Iterable<readonly Quotient[]>): CommonSum {
+    /** By factor its exponent in the denominator of the summand at hand, and the highest one so far. */
+    const own: number[] = [];
+    const highest: number[] = [];
     const numerator = new SumOfBits();
     let degree = Number.NEGATIVE_INFINITY;
     let count = 0;
-    for (const { top, bottom } of summands) {
+    for (const summand of summands) {
       count += 1;
-      for (let i = 0; i < bottom.length; i += 2) {
-        const factor = bottom[i]!;
-        while (exponents.length <= factor) exponents.push(0);
-        if (bottom[i + 1]! > exponents[factor]!) exponents[factor] = bottom[i + 1]!;
+      let [ownDegree, ownBits] = [0, 0];
+      for (const { top, bottom } of summand) {
+        const [above, below] = [this.bound(top), this.bound(bottom)];
+        ownDegree += above.degree - below.degree;
+        ownBits += above.bits - below.bits;
+        for (let i = 0; i < bottom.length; i += 2) {
+          const factor = bottom[i]!;
+          for (; own.length <= factor; highest.push(0)) own.push(0);
+          own[factor]! += bottom[i + 1]!;
+        }
       }
-      const [above, below] = [this.bound(top), this.bound(bottom)];
-      degree = Math.max(degree, above.degree - below.degree);
-      numerator.add(above.bits - below.bits);
+      for (const { bottom } of summand) {
+        for (let i = 0; i < bottom.length; i += 2) {
+          const factor = bottom[i]!;
+          if (own[factor]! > highest[factor]!) highest[factor] = own[factor]!;
+          own[factor] = 0;
+        }
+      }
+      degree = Math.max(degree, ownDegree);
+      numerator.add(ownBits);
     }
-    const bottom = exponents.flatMap((exponent, factor) => (exponent === 0 ? [] : [factor, exponent]));
+    const bottom = highest.flatMap((exponent, factor) => (exponent === 0 ? [] : [factor, exponent]));
     if (count === 0) return { top: { degree: 0, bits: 0 }, bottom };
     const whole = this.bound(bottom);
     return { top: { degree: Math.max(0, degree + whole.degree), bits: numerator.bits + whole.bits }, bottom };

@@ -24,8 +24,12 @@ export function sizeBound(form: FormAtN): FormSize {
   const algebra = new SizeAlgebra(form.n);
   const walker = new Walker(algebra, form.formula, form);
   const { factors } = algebra;
-  function* terms(): Generator<Quotient> {
-    for (const term of expandTerms(form.formula, form)) yield walker.value(term.expression, term);
+  function* terms(): Generator<readonly Quotient[]> {
+    for (const term of expandTerms(form.formula, form)) {
+      const { expression } = term;
+      const factors = expression.kind === "multiply" ? expression.factors : [expression];
+      yield factors.map((factor) => walker.value(factor, term));
+    }
   }
   const sum = factors.commonSum(terms());
   const measure = inDualPoints(form.formula) ? algebra.dualMeasure(form.loops) : factors.one();

@@ -1,6 +1,7 @@
 /** Goes through a syntax tree at given n and L and computes its value in any algebra, every name, label and sum resolved. */
 import { enumerateBindings } from "../notation/bindings";
 import {
+  areFixed,
   cyclicPlaces,
   definitionPlace,
   definitionsOf,
@@ -39,6 +40,8 @@ export class Walker<V, P, L> {
   private readonly geometries = new Map<string, readonly Piece<P, L>[]>();
   private readonly pieces = new Map<string, Piece<P, L>>();
   private readonly legs: (PointPiece<P> | undefined)[] = [];
+  /** R-invariants without indices where nothing moves them, by their node. */
+  private readonly fixedInvariants = new Map<Expression, V>();
 
   constructor(
     private readonly algebra: Algebra<V, P, L>,
@@ -109,11 +112,20 @@ export class Walker<V, P, L> {
         this.span = expression.span;
         return expression.kind === "four" ? algebra.fourBracket(pieces) : algebra.angleBracket(pieces);
       }
-      case "five":
+      case "five": {
+        // Derived forms share their nodes: most invariants are met again as the same node.
+        const known = this.fixedInvariants.get(expression);
+        if (known !== undefined && place.shift === 0) return known;
+        const points = this.points(expression.items, place);
+        this.span = expression.span;
+        const value = algebra.fiveBracket(points);
+        if (areFixed(expression.items, place)) this.fixedInvariants.set(expression, value);
+        return value;
+      }
       case "delta": {
         const points = this.points(expression.items, place);
         this.span = expression.span;
-        return expression.kind === "five" ? algebra.fiveBracket(points) : algebra.delta(points);
+        return algebra.delta(points);
       }
       case "square":
         this.span = expression.span;

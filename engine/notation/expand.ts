@@ -2,7 +2,7 @@
 import type { Span } from "../result";
 import { enumerateBindings } from "./bindings";
 import { type Bindings, bindingsFor, evaluateIndex } from "./indices";
-import type { Definition, Expression, Formula, IndexExpression, LoopNumber } from "./tree";
+import type { Definition, Expression, Formula, IndexExpression, Item, LoopNumber } from "./tree";
 
 /** The size of the amplitude that a formula is written out for. */
 export interface Extent {
@@ -72,6 +72,14 @@ export function definitionPlace(
   });
   return { ...place, bindings };
 }
+
+/** Whether an item means the same wherever it stands, as long as nothing moves it: a label without indices, or a name without arguments. */
+const isFixedItem = (item: Item): boolean =>
+  item.kind === "label" ? item.index.terms.length === 0 : item.kind === "named" && item.arguments.length === 0;
+
+/** Whether items have one meaning in the whole formula: they hold no index, and neither `cyc` nor `sym` moves them at this place. */
+export const areFixed = (items: readonly Item[], { shift, permutation }: Place): boolean =>
+  shift === 0 && permutation.length < 2 && items.every(isFixedItem);
 
 /** The definitions of a formula by name. */
 export function definitionsOf(formula: Formula): ReadonlyMap<string, Definition> {

@@ -9,7 +9,7 @@ import { treeBound, treeCost } from "./subamplitudeBound";
 import { sharedTree } from "./subamplitudes";
 import { treePlan, treeTermCount } from "./treePlan";
 
-/** Above this many terms the plan alone takes seconds: (14, k) for every k, (31, 2) and (64, 1) are below. */
+/** Above this many terms plan and bound alone take seconds: (14, k) for every k, (31, 2) and (64, 1) are below. */
 export const mostTreeTerms = 50_000;
 
 /** The recursion's plan for (n, k), shared by all points. */
@@ -24,9 +24,6 @@ export const planFor = (question: Question) => recursionPlan(`${question.n},${qu
 export const treeInReach = (question: Question): boolean =>
   inRange(question) && treeTermCount(question.n, question.k) <= mostTreeTerms;
 
-/** Above this many terms the shared recursion takes more than a few seconds a point: (16, k) for every k is below. */
-export const mostSharedTerms = 300_000;
-
 /** The shared recursion for (n, k) with its bound, k >= 1. */
 const sharedFor = remembering(4, (key) => {
   const [n, k] = key.split(",").map(Number) as [number, number];
@@ -35,15 +32,12 @@ const sharedFor = remembering(4, (key) => {
 });
 const one: SizeBound = { degree: 0, denominatorDegree: 0, heightBits: 0, denominatorHeightBits: 0 };
 
-/** The tree superamplitude over the MHV tree, for every (n,k) with up to 300,000 terms and k <= 16, by on-shell recursion. */
+/** The tree superamplitude over the MHV tree, for every (n,k) with up to 50,000 terms and k <= 16, by on-shell recursion. */
 export const recursion: Source = {
   name: "on-shell recursion",
   reference: "arXiv:1008.2958 The All-Loop Integrand For Scattering Amplitudes in Planar N=4 SYM; arXiv:hep-th/0501052",
   lineage: "on-shell recursion",
-  covers: (question) =>
-    asksSuperamplitude(question, 0) &&
-    question.k <= mostColumns &&
-    treeTermCount(question.n, question.k) <= mostSharedTerms,
+  covers: (question) => asksSuperamplitude(question, 0) && question.k <= mostColumns && treeInReach(question),
   cost: ({ n, k }) => (k === 0 ? 1 : sharedFor(`${n},${k}`).cost),
   size: ({ n, k }) => (k === 0 ? one : sharedFor(`${n},${k}`).size),
   evaluate(question: Question, point: Point<number>, prime: number): number | null {

@@ -1,6 +1,7 @@
 /** From the syntax tree to a graph of ring operations: sums written out, labels reduced, brackets normalised, deltas as determinants. */
 import { enumerateBindings } from "../notation/bindings";
 import {
+  areFixed,
   cyclicPlaces,
   definitionPlace,
   definitionsOf,
@@ -54,6 +55,8 @@ export class Lowering {
   private readonly figures: (Figure | undefined)[] = [];
   private readonly invariants = new TupleTable();
   private readonly invariantValues: Element[] = [];
+  /** R-invariants without indices where nothing moves them, by their node. */
+  private readonly fixedInvariants = new Map<Expression, Element>();
   private readonly largeArguments = new Map<bigint, number>();
   private readonly buffer = new Int32Array(6);
   /** <AB>^-4 for each loop line of a form in dual points, else null. */
@@ -127,9 +130,16 @@ export class Lowering {
       }
       case "unknown":
         throw new Error(`value: expected a formula without unknowns, got ?${expression.name}`);
-      case "five":
+      case "five": {
+        // Derived forms share their nodes: most invariants are met again as the same node.
+        const known = this.fixedInvariants.get(expression);
+        if (known !== undefined && place.shift === 0) return known;
+        const value = this.invariant("five", this.figure(expression.items, place).points, expression.span);
+        if (areFixed(expression.items, place)) this.fixedInvariants.set(expression, value);
+        return value;
+      }
       case "delta":
-        return this.invariant(expression.kind, this.figure(expression.items, place).points, expression.span);
+        return this.invariant("delta", this.figure(expression.items, place).points, expression.span);
       default:
         return exterior.scalar(this.bracket(expression, place));
     }
