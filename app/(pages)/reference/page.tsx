@@ -65,10 +65,10 @@ export default function Reference() {
       </Section>
       <Section id="verdicts" head="Verdicts">
         <p>
-          A form is accepted when it agrees with at least one independent calculation, or with an accepted form, at
-          random points over prime fields that are drawn after it was submitted. The report states the points and a
-          bound on the probability that a wrong form would pass: a probabilistic identity check, not a symbolic proof.
-          Where there is nothing to compare with, the form is held.
+          A form is accepted when it agrees with at least one <a href="/reference/sources">independent calculation</a>,
+          or with an accepted form, at random points over prime fields that are drawn after it was submitted. The report
+          states the points and a bound on the probability that a wrong form would pass: a probabilistic identity check,
+          not a symbolic proof. Where there is nothing to compare with, the form is held.
         </p>
       </Section>
       <Section id="limits" head="Limits">

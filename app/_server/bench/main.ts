@@ -3,6 +3,7 @@ import { cpus } from "node:os";
 import { join } from "node:path";
 import { checks } from "./checks";
 import { costs } from "./costs";
+import { operations } from "./operations";
 import type { Report } from "./report";
 import { sums } from "./sums";
 import { typing } from "./typing";
@@ -12,7 +13,10 @@ const parts: Readonly<Record<string, (report: Report, root: string) => void>> = 
   w: (report, root) => sums(report, join(root, "engine", "tape", "bench", "tape.c")),
   typing: (report) => typing(report),
   cost: (report) => costs(report, ["9,3", "10,3", "11,4", "12,4", "13,5"]),
-  checks: (report, root) => checks(report, root),
+  checks: (report, root) => {
+    operations(report);
+    checks(report, root);
+  },
   large: (report) => costs(report, ["14,5", "16,6"]),
 };
 const always = ["w", "typing", "cost"];

@@ -35,7 +35,7 @@ export function EvaluateForm({ initial, action }: { initial: EvaluateState; acti
           </Section>
         )}
       </div>
-      <Section id="ask" head="Evaluate" wide>
+      <Section id="ask" head="Evaluate">
         <form key={JSON.stringify(state.fields)} className={styles.form} action={act} noValidate>
           <WhatFields fields={state.fields} />
           <WhereFields fields={state.fields} />
