@@ -128,6 +128,7 @@ test("a double click submits once, and so does a retry after the answer was lost
 });
 
 test("a draft of two thousand terms comes back and can be typed into without waiting", async ({ page }) => {
+  test.setTimeout(180_000);
   const notation = Array.from({ length: 2000 }, (_, i) => `${i + 1} [1 2 3 ${4 + (i % 2)} 6]`).join("\n+ ");
   await page.addInitScript((text) => {
     const fields = {
@@ -148,13 +149,13 @@ test("a draft of two thousand terms comes back and can be typed into without wai
     }).observe({ type: "longtask" });
   }, notation);
   await page.goto("/submit");
-  await expect(page.getByText("2,000 terms at n = 6")).toBeVisible();
+  await expect(page.getByText("2,000 terms at n = 6")).toBeVisible({ timeout: 60_000 });
   await page.getByRole("textbox", { name: "Formula, in the notation" }).click();
   await page.evaluate(() => {
     (window as unknown as { longest: number }).longest = 0;
   });
   await page.keyboard.type("7 + ", { delay: 60 });
-  await expect(page.getByText("2,001 terms at n = 6")).toBeVisible();
+  await expect(page.getByText("2,001 terms at n = 6")).toBeVisible({ timeout: 60_000 });
   // A bound that holds on a machine busy with other work; a parse on the page's own thread would take longer.
   expect(await page.evaluate(() => (window as unknown as { longest: number }).longest)).toBeLessThan(400);
 });

@@ -8,7 +8,7 @@ import type { Verdict } from "./verdict";
 
 /** A pause in typing after which the formula is read, and the time after which a reading is given up. */
 const PAUSE = 200;
-const PATIENCE = 8000;
+const PATIENCE = 30_000;
 
 export interface PreviewState {
   readonly preview: Preview;
