@@ -45,7 +45,7 @@ class TreeRun {
     /** One over the five brackets of each invariant. */
     private readonly factors: Int32Array,
   ) {
-    this.tables = rowTables(tree.k);
+    this.tables = tree.tables;
     this.prefixes = this.tables.map(({ size }) => new Int32Array(4 * size));
     this.row = splitOf(4 * tree.k);
     this.covector = splitOf(4 * tree.k);

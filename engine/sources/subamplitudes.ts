@@ -2,6 +2,7 @@
  * The tree recursion with its sub-amplitudes kept apart (hep-th/0501052; in momentum twistors 1008.2958, section 2): amplitudes of
  * the same legs are one, and a term is a path through them. 226,512 terms of (16,6) are made of some 100,000 sub-amplitudes.
  */
+import { type RowTable, rowTables } from "./exteriorTables";
 import { type Plan, PlanBuilder } from "./plan";
 import { splitLegs, treeExists } from "./treePlan";
 
@@ -25,6 +26,8 @@ export interface SubAmplitude {
 
 export interface SharedTree {
   readonly k: number;
+  /** Of products with a row, by degree. */
+  readonly tables: readonly RowTable[];
   /** Points and invariants; it has no terms of its own. */
   readonly plan: Plan;
   /** In an order in which everything that one is made of comes before it. */
@@ -33,7 +36,7 @@ export interface SharedTree {
   readonly whole: SubAmplitude;
 }
 
-/** The (n,k) tree, 1 <= k <= n-4. */
+/** The (n,k) tree, 1 <= k <= n-4, k <= 16. */
 export function sharedTree(n: number, k: number): SharedTree {
   const builder = new PlanBuilder(n);
   const known = new Map<string, SubAmplitude>();
@@ -63,7 +66,7 @@ export function sharedTree(n: number, k: number): SharedTree {
   const legs = Array.from({ length: n }, (_, leg) => leg);
   const whole = amplitude(legs, k);
   if (whole === null) throw new Error(`sharedTree: expected k >= 1, got ${k}`);
-  return { k, plan: builder.finish([]), subAmplitudes, whole };
+  return { k, tables: rowTables(k), plan: builder.finish([]), subAmplitudes, whole };
 }
 
 function countPaths(
