@@ -15,6 +15,7 @@ import { Lead, Opening, Page, Section } from "../../_ui/Page";
 import { SourceText } from "../../_ui/SourceText";
 import { TableBox } from "../../_ui/TableBox";
 import { brackets, expressions, items } from "./rules";
+import { valueCodes } from "./valueCodes";
 
 export const metadata: Metadata = { title: "Notation and conventions" };
 
@@ -88,7 +89,7 @@ export default function Reference() {
             </tr>
           </thead>
           <tbody>
-            {Object.entries(codes).map(([code, meaning]) => (
+            {Object.entries({ ...codes, ...valueCodes }).map(([code, meaning]) => (
               <tr key={code} id={code}>
                 <th scope="row">
                   <code>{code}</code>

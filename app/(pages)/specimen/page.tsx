@@ -1,6 +1,7 @@
 import type { Metadata } from "next";
 import { CiteBox } from "../../_ui/CiteBox";
 import { Diagnostics } from "../../_ui/Diagnostics";
+import { ValueResult } from "../../_ui/evaluate/ValueResult";
 import { Formula } from "../../_ui/Formula";
 import { Marks } from "../../_ui/MarkSentence";
 import { Lead, Opening, Page, Section } from "../../_ui/Page";
@@ -8,7 +9,18 @@ import { Poles } from "../../_ui/PoleTable";
 import { SeedProgressLine } from "../../_ui/SeedProgressLine";
 import { StateSentence } from "../../_ui/StateSentence";
 import { Triangle } from "../../_ui/Triangle";
-import { accepted, faults, faulty, longFormula, manyPoles, rows, shortFormula, wideFormula } from "./samples";
+import {
+  accepted,
+  approximateValues,
+  exactValues,
+  faults,
+  faulty,
+  longFormula,
+  manyPoles,
+  rows,
+  shortFormula,
+  wideFormula,
+} from "./samples";
 
 export const metadata: Metadata = { title: "The parts of the pages", robots: { index: false } };
 
@@ -47,6 +59,10 @@ export default function Specimen() {
       </Section>
       <Section id="triangle" head="Triangle">
         <Triangle loops={0} rows={rows} />
+      </Section>
+      <Section id="values" head="Values" wide>
+        <ValueResult reply={exactValues} name="exact-values" address="/specimen" />
+        <ValueResult reply={approximateValues} name="approximate-values" address={null} />
       </Section>
       <Section id="seed" head="Progress">
         <SeedProgressLine

@@ -1,6 +1,6 @@
 /** Made-up data that put each part of the pages into each of its states; nothing here is a result. */
 
-import type { CheckView, Triangle } from "../../_contract";
+import type { CheckView, EvaluateReply, Triangle } from "../../_contract";
 
 type Report = NonNullable<CheckView["report"]>;
 
@@ -76,3 +76,17 @@ export const faults: Report["diagnostics"] = [
   { code: "unknown-name", span: [34, 35], message: "“q” is not defined.", help: "Define it, or sum over it." },
   { code: "field-n", message: "The field n is empty.", help: "Give one number, as 7, or a range, as 5..12." },
 ];
+
+export const exactValues: EvaluateReply = {
+  values: ["-22/7", "355/113", null],
+  reasons: [{ point: 2, message: "a denominator vanishes at characters 4 to 13 of the notation" }],
+  seed: "specimen",
+};
+
+export const approximateValues: EvaluateReply = {
+  components: [
+    { helicities: "--+++", values: [["0.5", "-1.25"]], errors: ["2.1e-15"], digits: [14] },
+    { helicities: "-+-++", values: [["12.75", "3e-7"]], errors: ["4.0e-9"], digits: [9] },
+  ],
+  warnings: [{ point: 0, message: "legs 3 and 4 are nearly collinear: digits are lost" }],
+};

@@ -11,7 +11,7 @@ const SHOWN = 200;
 
 const signs = (helicities: string): string => [...helicities.replaceAll("-", "−")].join("\u2009");
 
-/** Values as a table, to copy and to download. `name` names the files, `address` gives the same values again. */
+/** Values as a table, to copy and to download. `name` names table and files, `address` gives the same values again. */
 export function ValueResult({ reply, name, address }: { reply: EvaluateReply; name: string; address: string | null }) {
   const rows = valueRows(reply);
   const csv = valuesAsCsv(rows);
@@ -36,7 +36,7 @@ export function ValueResult({ reply, name, address }: { reply: EvaluateReply; na
           Point {point}: {message}.
         </p>
       ))}
-      <ValueTable rows={rows.slice(0, SHOWN)} />
+      <ValueTable rows={rows.slice(0, SHOWN)} name={name} />
       {rows.length > SHOWN && (
         <p>
           The first {SHOWN} of {rows.length.toLocaleString("en")} values; the files have all.
@@ -68,12 +68,12 @@ export function ValueResult({ reply, name, address }: { reply: EvaluateReply; na
 /** A file in an address of its own, so that it can be had without script and without asking again. */
 const dataAddress = (type: string, text: string): string => `data:${type};charset=utf-8,${encodeURIComponent(text)}`;
 
-function ValueTable({ rows }: { rows: readonly ValueRow[] }) {
+function ValueTable({ rows, name }: { rows: readonly ValueRow[]; name: string }) {
   const has = (part: keyof ValueRow): boolean => rows.some((row) => row[part] !== "");
   const [components, complex, approximate] = [has("helicities"), has("im"), has("digits")];
   const fractions = !complex && rows.some(({ re }) => re.includes("/"));
   return (
-    <TableBox label="Table of values">
+    <TableBox label={`Table of ${name}`}>
       <thead>
         <tr>
           <th scope="col">Point</th>
