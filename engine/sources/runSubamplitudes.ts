@@ -4,16 +4,7 @@
  * begin alike, and the last row of each term costs one scalar product a flavour.
  */
 import type { Modulus } from "./arithmetic";
-import {
-  covectorInto,
-  dot,
-  type RowTable,
-  rowTables,
-  type Split,
-  splitInto,
-  splitOf,
-  timesRow,
-} from "./exteriorTables";
+import { covectorInto, dot, type RowTable, type Split, splitInto, splitOf, timesRow } from "./exteriorTables";
 import { evaluatePlan, type SuperPoint } from "./runPlan";
 import type { SharedTree, SubAmplitude } from "./subamplitudes";
 
