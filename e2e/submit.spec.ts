@@ -155,6 +155,8 @@ test("a draft of two thousand terms comes back and can be typed into without wai
     (window as unknown as { longest: number }).longest = 0;
   });
   await page.keyboard.press("Control+Home");
+  // A click lands anywhere in the text, also inside a bracket.
+  await page.keyboard.press("Control+Home");
   await page.keyboard.type("7 + ", { delay: 60 });
   await expect(page.getByText("2,001 terms at n = 6")).toBeVisible({ timeout: 60_000 });
   // A bound that holds on a machine busy with other work; a parse on the page's own thread would take longer.
