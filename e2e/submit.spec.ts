@@ -154,7 +154,6 @@ test("a draft of two thousand terms comes back and can be typed into without wai
   await page.evaluate(() => {
     (window as unknown as { longest: number }).longest = 0;
   });
-  await page.keyboard.press("Control+Home");
   // A click lands anywhere in the text, also inside a bracket.
   await page.keyboard.press("Control+Home");
   await page.keyboard.type("7 + ", { delay: 60 });
